@@ -1,0 +1,2 @@
+export * from './contract.js';
+export { RillageError, describeIssue, type Issue } from './errors.js';
