@@ -1,0 +1,13 @@
+import { policyName } from './tools/rollup/own-policy.mjs';
+
+/** The strictest content security policy under which the single-file build works; the exact header for an embedding page to send. */
+export const contentSecurityPolicy = [
+  "default-src 'none'",
+  "script-src 'self'",
+  "style-src 'self'",
+  "connect-src 'self'",
+  "img-src 'self'",
+  "base-uri 'none'",
+  "require-trusted-types-for 'script'",
+  `trusted-types ${policyName}`,
+].join('; ');
