@@ -10,13 +10,14 @@ import { fileURLToPath } from 'node:url';
 import { parseArgs } from 'node:util';
 import { trackAges } from './generator/ages.mjs';
 import { agencyFiles } from './generator/files.mjs';
+import { refineAges } from './generator/refine.mjs';
 import { makeSamples } from './generator/samples.mjs';
 import { STATIONS } from './generator/stations.mjs';
 import { truthFile } from './generator/truth.mjs';
 import { makeWater } from './generator/water.mjs';
 import { makeWeather } from './generator/weather.mjs';
 
-export { STATIONS, agencyFiles, makeSamples, makeWater, makeWeather, trackAges, truthFile };
+export { STATIONS, agencyFiles, makeSamples, makeWater, makeWeather, refineAges, trackAges, truthFile };
 
 const SAMPLE_FILES = ['stream-samples.csv', 'rain-samples.csv'];
 
@@ -24,7 +25,7 @@ const SAMPLE_FILES = ['stream-samples.csv', 'rain-samples.csv'];
 export function makeStationTruth(station, options) {
   const weather = makeWeather(station);
   const water = makeWater(station, weather);
-  return { weather, water, truth: trackAges(station, water, options) };
+  return { weather, water, truth: refineAges(station, water, options) };
 }
 
 /** The text of every file, by name. With `noiseSeed`, other laboratory errors on the same water. */

@@ -6,12 +6,15 @@ export function truthFile(station, { weather, water, truth }) {
   const { concentration } = truth;
   return `${JSON.stringify({
     about: `The truth of an invented catchment. ${station.note}`,
-    made: 'An independent first-order age-tracking loop at sub-daily steps; see generator/ages.mjs. No part of the SDK took part.',
+    made: 'An independent age-tracking loop, first order at two sub-daily steps and extrapolated; see generator/. No part of the SDK took part.',
     station: station.id,
     firstDay: station.firstDay,
     lastDay: station.lastDay,
     daysAfter: station.daysAfter ?? 0,
-    subStepsPerDay: station.subSteps,
+    subStepsPerDay: [station.subSteps / 2, station.subSteps],
+    largestDifferenceOfTheTwo: Object.fromEntries(
+      Object.entries(truth.differ).map(([name, value]) => [name, Number(value.toPrecision(2))]),
+    ),
     areaKm2: station.areaKm2,
     cropFactor: station.water.cropFactor,
     initialStorage: station.truth.initialStorage,
