@@ -271,8 +271,10 @@ export interface Reading {
   /** Against the same season (± 15 days) of earlier years in the history: the youngest-month share. null where the history is too short. */
   trend: { direction: 'younger' | 'older' | 'usual'; days: number; usualShare: number; years: number } | null;
   language: string;
-  /** One to three plain sentences. */
+  /** One to four plain sentences. */
   sentence: string;
+  /** The same, one by one; the first can stand alone as a headline. */
+  sentences?: string[];
   caution: string;
   evidence: {
     recordFrom: string;
@@ -299,6 +301,16 @@ export interface DistributionWithRange extends AgeDistribution {
   recordDays: number;
 }
 
+/** A run and how much it counts. A fit's draws are many of them. */
+export interface WeightedRun {
+  /** Not negative; only the ratios matter. */
+  weight: number;
+  run: ColumnRun;
+}
+
+/** What a reading or a station is made from: a single run, or runs with weights over the same steps. */
+export type ReadingSource = ColumnRun | readonly WeightedRun[];
+
 /** One value a step, oldest first; bounded in length. null where there was no outflow. */
 export interface StationHistory {
   /** ISO instant at which the first kept step begins. */
@@ -319,6 +331,14 @@ export interface StationHistory {
   preRecordShare: (number | null)[];
   /** By tracer, simulated. */
   concentration: Record<string, (number | null)[]>;
+}
+
+/** The last rows of the forcing as they were used, so that rows sent again can be told from rows that contradict. */
+export interface StationRows {
+  /** ISO instant at which the first kept row begins. */
+  start: string;
+  inflow: number[];
+  outflows: Record<string, number[]>;
 }
 
 /** One member of an ensemble: a draw's catchment with its running state. */
@@ -345,6 +365,10 @@ export interface Station {
   /** Summary of the fit that made the members; absent for a single run. */
   fit?: unknown;
   history: StationHistory;
+  /** At most 400 steps. */
+  recent: StationRows;
+  /** mm since the record began. */
+  balance: { inflow: number; outflow: number };
   distribution: DistributionWithRange;
   reading: Reading;
   receipt?: Receipt;
