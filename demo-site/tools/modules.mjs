@@ -12,7 +12,7 @@ import { onChange } from './stamp.mjs';
 export function buildModules(name, alsoInputs = []) {
   const source = at(`packages/${name}/src`);
   const target = at(`packages/${name}/dist`);
-  const sources = filesUnder(source);
+  const sources = filesUnder(source).filter((path) => !path.endsWith('.md'));
   const outputs = sources.filter((path) => !path.endsWith('.d.ts')).flatMap((path) => outputsOf(join(target, relative(source, path))));
   const config = at(`packages/${name}/tsconfig.json`);
 
