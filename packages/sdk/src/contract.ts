@@ -258,7 +258,10 @@ export interface Reading {
   stepDays: number;
   status: 'given' | 'withheld';
   /** Reasons, when withheld; codes are stable. */
-  withheld: { code: 'noOutflow' | 'recordTooShort' | 'storageRunsDown' | 'preRecordDominates' | 'fitNotConverged' | 'notAssessed' | (string & {}); because: string }[];
+  withheld: {
+    code: 'noOutflow' | 'recordTooShort' | 'storageRunsDown' | 'preRecordDominates' | 'fitNotConverged' | 'notAssessed' | (string & {});
+    because: string;
+  }[];
   /** `notAssessed` for a reading from a single run. */
   confidence: 'firm' | 'tentative' | 'withheld' | 'notAssessed';
   /** The rules that led there, in words. */
@@ -366,9 +369,9 @@ export interface Station {
   fit?: unknown;
   history: StationHistory;
   /** At most 400 steps. */
-  recent: StationRows;
+  recent?: StationRows;
   /** mm since the record began. */
-  balance: { inflow: number; outflow: number };
+  balance?: { inflow: number; outflow: number };
   distribution: DistributionWithRange;
   reading: Reading;
   receipt?: Receipt;
