@@ -1,28 +1,41 @@
 import { existsSync } from 'node:fs';
-import { fileURLToPath } from 'node:url';
 import resolve from '@rollup/plugin-node-resolve';
 import terser from '@rollup/plugin-terser';
 import { lateUplot } from './demo-site/tools/rollup/late-uplot.mjs';
 import { ownPolicy } from './demo-site/tools/rollup/own-policy.mjs';
+import { at, filesUnder } from './demo-site/tools/paths.mjs';
 import { lines } from './demo-site/tools/rollup/lines.mjs';
-
-const at = (path) => fileURLToPath(new URL(path, import.meta.url));
 
 const banner = '/*! Rillage, MIT. What it contains of others: third-party-licences.txt in the same folder. */';
 
 /**
- * Every single-file build. The unbundled modules come from tsc; see demo-site/build.mjs, which runs both.
- * `input` is a built module, or `from` with `code`: an entry made of a few lines, resolved as if it lay at `from`.
+ * Every single-file build that ships. The unbundled modules come from tsc; see demo-site/build.mjs, which runs both. A function, since an
+ * entry of elements is made of what tsc has written. A page loads one file of elements: a second would ask for the same policy name.
  */
-export const bundles = [
-  { name: 'sdk', input: at('packages/sdk/dist/index.js'), file: at('packages/sdk/dist/rillage-sdk.min.js') },
-  {
-    name: 'worker',
-    input: at('packages/sdk/dist/workers/worker-entry.js'),
-    file: at('packages/sdk/dist/workers/rillage-worker.min.js'),
-  },
-  { name: 'elements', input: at('packages/elements/dist/index.js'), file: at('packages/elements/dist/rillage-elements.min.js') },
-];
+export function bundles() {
+  const every = definitions();
+  return [
+    { name: 'sdk', input: at('packages/sdk/dist/index.js'), file: at('packages/sdk/dist/rillage-sdk.min.js') },
+    { name: 'worker', input: at('packages/sdk/dist/workers/worker-entry.js'), file: at('packages/sdk/dist/workers/rillage-worker.min.js') },
+    elementBundle('rillage-elements', every, "export * from './index.js';"),
+    elementBundle(
+      'rillage-reading',
+      every.filter((path) => /rillage-(station|reading)[\\/]/.test(path)),
+    ),
+  ].filter((bundle) => (bundle.needs ?? [bundle.input]).every((path) => existsSync(path)));
+}
+
+/** One file that defines some elements. @param defining  absolute paths of built define.js files */
+export function elementBundle(name, defining, more = '', folder = at('packages/elements/dist')) {
+  const from = at(`packages/elements/dist/${name}.entry.js`);
+  const code = [...defining.map((path) => `import ${JSON.stringify(path)};`), more].join('\n');
+  // An absent file keeps the bundle out of the list until there is something to define.
+  const needs = defining.length > 0 ? [...defining, ...(more ? [at('packages/elements/dist/index.js')] : [])] : [from];
+  return { name, from, code, needs, file: `${folder}/${name}.min.js` };
+}
+
+/** The built define.js of every element. */
+export const definitions = () => filesUnder(at('packages/elements/dist')).filter((path) => /rillage-[a-z-]+[\\/]define\.js$/.test(path));
 
 /** Rollup's options for one bundle. */
 export function optionsFor({ input, from, code, file }) {
@@ -43,7 +56,7 @@ export function optionsFor({ input, from, code, file }) {
   };
 }
 
-export default bundles.filter((bundle) => existsSync(bundle.input)).map(optionsFor);
+export default bundles().map(optionsFor);
 
 function small() {
   return terser({ module: true, ecma: 2022, compress: { passes: 2 }, format: { comments: /^!/ } });

@@ -1,23 +1,21 @@
-import { existsSync } from 'node:fs';
 import { rollup } from 'rollup';
 import { bundles, optionsFor } from '../../rollup.config.mjs';
 import { at, filesUnder } from './paths.mjs';
 import { onChange } from './stamp.mjs';
 
-/** The single-file builds whose entry exists. */
-export const presentBundles = () => bundles.filter((bundle) => existsSync(bundle.input ?? bundle.needs));
-
 /** Makes every single-file build whose inputs have changed. */
 export async function buildBundles() {
   const modules = ['sdk', 'elements'].flatMap((name) => filesUnder(at(`packages/${name}/dist`)).filter((path) => isModule(path)));
   const tools = [at('rollup.config.mjs'), at('package-lock.json'), ...filesUnder(at('demo-site/tools/rollup'))];
-  const present = presentBundles();
+  const present = bundles();
   return onChange({
     name: 'bundles',
     inputs: [...modules, ...tools],
     outputs: present.map((bundle) => bundle.file),
     async work() {
-      for (const bundle of present) await writeBundle(bundle);
+      const failures = [];
+      for (const bundle of present) await writeBundle(bundle).catch((reason) => failures.push(`${bundle.name}: ${reason.message}`));
+      if (failures.length > 0) throw new Error(failures.join('\n'));
     },
   });
 }

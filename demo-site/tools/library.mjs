@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { copyFileSync, existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { basename, dirname } from 'node:path';
-import { presentBundles } from './bundles.mjs';
+import { bundles } from '../../rollup.config.mjs';
 import { at, filesUnder } from './paths.mjs';
 
 /**
@@ -11,8 +11,8 @@ import { at, filesUnder } from './paths.mjs';
 export function publishLibrary() {
   const library = at('demo-site/public/lib');
   mkdirSync(library, { recursive: true });
-  const files = presentBundles()
-    .filter((bundle) => bundle.shipped !== false && existsSync(bundle.file))
+  const files = bundles()
+    .filter((bundle) => existsSync(bundle.file))
     .map((bundle) => bundle.file);
   const hashes = Object.fromEntries(files.map((path) => [basename(path), integrityOf(path)]));
 
