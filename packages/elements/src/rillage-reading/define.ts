@@ -1,0 +1,4 @@
+import { define } from '../shared/define.js';
+import { RillageReading } from './rillage-reading.js';
+
+define('rillage-reading', RillageReading);

@@ -1,0 +1,101 @@
+import type { Range, Reading } from '@rillage/sdk';
+import { age, ageSpan, date, moment } from '../shared/format.js';
+import { frequency } from '../shared/frequency.js';
+import type { Language } from '../shared/language.js';
+import { cleanText } from '../shared/text.js';
+import type { ReadingKey } from './messages.js';
+
+type Speech = Pick<Language<ReadingKey>, 'tag' | 'say' | 'speaks'>;
+
+/** A statement in words: the sentence that says it, and what follows. */
+export interface Statement {
+  lead: string;
+  rest: string[];
+}
+
+/**
+ * The reading's own prose where it is in the page's language, else the same said from the numbers.
+ * @param days  the age limit the sentence is about
+ */
+export function statement(speech: Speech, reading: Reading, days: number, timeZone: string): Statement {
+  const written = speech.speaks(reading.language) ? sentences(cleanText(reading.sentence, 2000), speech.tag) : [];
+  const [lead, ...rest] = written.length ? written : compose(speech, reading, days, timeZone);
+  return { lead: lead ?? '', rest };
+}
+
+/** Sentences from the numbers of a reading: share within `days`, median, share beyond the record. */
+export function compose(speech: Speech, reading: Reading, days: number, timeZone: string): string[] {
+  const day = moment(speech.tag, reading.at, reading.stepDays, timeZone);
+  if (reading.status === 'withheld') return [speech.say('reading.withheld', { date: day }), ...reasons(speech, reading)];
+  const year = date(speech.tag, reading.evidence.recordFrom, { year: 'numeric' }, timeZone);
+  return [lead(speech, reading, days, day), median(speech, reading, year), beyond(speech, reading, year), assumed(speech, reading)].filter(
+    (text) => text !== '',
+  );
+}
+
+/** Why a reading is withheld: known codes in the page's language, others in the file's words. */
+export function reasons(speech: Speech, reading: Reading): string[] {
+  return reading.withheld.map(({ code, because }) => {
+    const own = speech.speaks(reading.language) ? cleanText(because) : '';
+    if (own) return own;
+    return known.has(code) ? speech.say(`reading.${code}` as ReadingKey) : cleanText(because) || cleanText(code, 60);
+  });
+}
+
+/** The share the sentence is about: at `days`, or the nearest age limit that has a number. */
+export function headline(reading: Reading, days: number): Reading['younger'][number] | null {
+  const stated = reading.younger.filter((younger) => younger.share !== null);
+  return stated.reduce<Reading['younger'][number] | null>(
+    (best, one) => (!best || Math.abs(one.days - days) < Math.abs(best.days - days) ? one : best),
+    null,
+  );
+}
+
+const known = new Set(['noOutflow', 'recordTooShort', 'storageRunsDown', 'preRecordDominates', 'fitNotConverged', 'notAssessed']);
+// Below half a per cent the unplaced share changes no rounded number.
+const negligible = 0.005;
+
+function lead(speech: Speech, reading: Reading, days: number, day: string): string {
+  const younger = headline(reading, days);
+  if (!younger || younger.share === null) return speech.say('reading.withheld', { date: day });
+  const { count, of, bound, low, high } = frequency(younger.share, younger.range);
+  const key =
+    bound === 'fewer'
+      ? 'reading.leadFewer'
+      : bound === 'more'
+        ? 'reading.leadMore'
+        : younger.unplaced > negligible
+          ? 'reading.leadAtLeast'
+          : 'reading.lead';
+  const water =
+    reading.of === 'discharge' ? speech.say('reading.stream') : speech.say('reading.outflow', { of: cleanText(reading.of, 60) });
+  const range = low === null || high === null ? speech.say('amount.unassessed') : speech.say('reading.likely', { low, high, of });
+  return speech.say(key, { count, of, water, date: day, days: younger.days, range });
+}
+
+function median(speech: Speech, { median: it }: Reading, year: string): string {
+  if (!it) return '';
+  if (it.beyondRecord) return speech.say('reading.halfBeyond', { year });
+  if (!it.range) return speech.say('reading.halfAbout', { age: age(speech, it.days) });
+  return speech.say('reading.half', { age: ageSpan(speech, it.range.low, it.range.high, it.range.highBeyondRecord) });
+}
+
+function beyond(speech: Speech, { olderThanRecord: { share, range } }: Reading, year: string): string {
+  if (share === null || share <= 0) return '';
+  const { count, of, bound } = frequency(share, range as Range | null);
+  return speech.say(bound === 'fewer' ? 'reading.beyondFewer' : 'reading.beyond', { count, of, year });
+}
+
+function assumed(speech: Speech, { assumedShare }: Reading): string {
+  if (assumedShare <= negligible) return '';
+  const { count, of } = frequency(assumedShare, null);
+  return speech.say('reading.assumed', { count, of });
+}
+
+function sentences(text: string, language: string): string[] {
+  if (!text) return [];
+  if (!('Segmenter' in Intl)) return [text];
+  return [...new Intl.Segmenter(language, { granularity: 'sentence' }).segment(text)]
+    .map(({ segment }) => segment.trim())
+    .filter((segment) => segment !== '');
+}

@@ -1,0 +1,22 @@
+export const stationMessages = {
+  'station.loading': 'Loading the station’s data …',
+  'station.stale': {
+    one: 'These data are old: they end on {date}, {count} day ago.',
+    other: 'These data are old: they end on {date}, {count} days ago.',
+  },
+  'station.future': 'These data are dated {date}, which is in the future: check the clock, here or at the station.',
+  'station.offline': 'No connection. Shown is the copy kept on {date}.',
+  'station.withheld': 'No age is given at present.',
+  'station.failed': 'The station’s data could not be loaded: {why}',
+  'station.failedKept': 'The newest data could not be loaded: {why} Shown is an earlier copy.',
+  'station.unreachable': 'the server cannot be reached.',
+  'station.notFound': 'there is no file at this address.',
+  'station.refused': 'the server answered with an error ({status}).',
+  'station.html': 'the address gives a web page, not a station file.',
+  'station.empty': 'the answer is empty.',
+  'station.tooLarge': 'the file is larger than {megabytes} MB.',
+  'station.truncated': 'the file is incomplete or damaged.',
+  'station.notStation': 'the file is not a station file ({at}).',
+  'station.newer': 'the file is of a newer version ({at}) than this page understands (1).',
+  'station.noData': 'No station was named.',
+} as const;
