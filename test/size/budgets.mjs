@@ -1,0 +1,70 @@
+import { at } from '../../demo-site/tools/paths.mjs';
+import { definitions, elementBundle } from '../../rollup.config.mjs';
+
+/** What each build may weigh and what must not be in it. A function, as entries of elements are made of what the build has written. */
+export function budgets() {
+  const defining = definitions();
+  const of = (...tags) => tags.map((tag) => at(`packages/elements/dist/${tag}/define.js`));
+  const engine = room('column', 'selection', 'tracers', 'fit', 'outlook', 'workers', 'forcing');
+  return [
+    {
+      name: 'SDK core',
+      limitKb: 20,
+      bundle: core(),
+      exports: ['runColumn', 'resumeColumn'],
+      without: [room('fit', 'outlook', 'reading', 'workers'), outside('sdk')],
+    },
+    {
+      name: 'reading alone',
+      limitKb: 12,
+      bundle: elementBundle('rillage-reading', of('rillage-station', 'rillage-reading')),
+      without: [/uplot/, engine, outside('sdk', 'elements', 'lit', 'idb-keyval')],
+    },
+    {
+      name: 'one plot',
+      limitKb: 36,
+      bundle: elementBundle('rillage-age-plot', of('rillage-age-plot')),
+      without: [engine, outside('sdk', 'elements', 'lit', 'uplot')],
+    },
+    {
+      name: 'all elements',
+      limitKb: 60,
+      bundle: elementBundle('rillage-elements', defining, "export * from './index.js';"),
+      without: [outside('sdk', 'elements', 'lit', 'uplot', 'idb-keyval')],
+    },
+  ];
+}
+
+/** Words that no build may hold: what the strict policy refuses, and what a copy of Lit for development says. */
+export const nowhere = [
+  /\beval\(/,
+  /new Function\(/,
+  /createPolicy\(["']lit-html/,
+  /Lit is in dev mode/,
+  /sourceMappingURL/,
+  /process\.env/,
+];
+
+/** The engine's calls alone, as a page that runs a column and shows nothing would bundle them. */
+function core() {
+  const from = at('packages/sdk/dist/core.entry.js');
+  return {
+    name: 'core',
+    from,
+    code: "export { runColumn, resumeColumn } from './index.js';",
+    needs: [at('packages/sdk/dist/index.js')],
+    file: at('.cache/core.min.js'),
+  };
+}
+
+const room = (...names) => new RegExp(`packages[\\\\/]sdk[\\\\/]dist[\\\\/](${names.join('|')})[\\\\/]`);
+
+/** Modules of any package but these; `lit` stands for the packages it is made of. */
+function outside(...names) {
+  const places = names.flatMap((name) => {
+    if (name === 'sdk' || name === 'elements') return [`packages/${name}/dist/`];
+    if (name === 'lit') return ['node_modules/lit/', 'node_modules/lit-html/', 'node_modules/lit-element/', 'node_modules/@lit/'];
+    return [`node_modules/${name}/`];
+  });
+  return { test: (id) => !id.startsWith('\0') && !places.some((place) => id.replaceAll('\\', '/').includes(place)) };
+}
