@@ -1,5 +1,9 @@
 import { browser } from './browser.mjs';
+import { docs } from './docs.mjs';
+import { manifest } from './manifest.mjs';
+import { packages } from './packages.mjs';
 import { size } from './size.mjs';
+import { start } from './start.mjs';
 import { buildAll, format, lint, types } from './static.mjs';
 import { unit } from './unit.mjs';
 
@@ -11,5 +15,9 @@ export const stages = [
   { name: 'build', run: buildAll, verify: true },
   { name: 'unit', run: unit, verify: true },
   { name: 'size', run: size, verify: true },
+  { name: 'manifest', run: manifest, verify: true },
+  { name: 'docs', run: docs, verify: true },
+  { name: 'packages', run: packages },
+  { name: 'start', run: start },
   { name: 'browser', run: browser },
 ];
