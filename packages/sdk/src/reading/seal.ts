@@ -1,0 +1,17 @@
+import { type Station } from '../contract.js';
+import { sha256Hex } from '../numeric/hash.js';
+import { canonicalJson } from './canonicalJson.js';
+
+/**
+ * The station with its seal: sha-256, in hex, of the UTF-8 bytes of the canonical JSON of everything else. It shows damage and careless
+ * edits; it is no signature, since anyone can compute it.
+ */
+export function seal(content: Omit<Station, 'seal'>): Station {
+  return { ...content, seal: sealOf(content) };
+}
+
+/** The seal that the content should carry; a `seal` in it is left out of account. */
+export function sealOf(content: object): string {
+  const { seal: _ignored, ...rest } = content as Record<string, unknown>;
+  return sha256Hex(new TextEncoder().encode(canonicalJson(rest)));
+}
