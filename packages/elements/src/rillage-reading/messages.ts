@@ -9,21 +9,22 @@ export const readingMessages = {
     one: 'About {count} litre in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
     other: 'About {count} litres in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
   },
-  'reading.leadAtLeast': {
-    one: 'At least {count} litre in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
-    other: 'At least {count} litres in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
-  },
+  'reading.leadBetween':
+    'Between {low} and {high} litres in {of} of {water} on {date} fell as rain within the last {days} days; the record is too short to say more.',
   'reading.leadFewer': 'Fewer than 1 litre in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
   'reading.leadMore': 'More than {count} litres in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
   'reading.likely': 'likely between {low} and {high} in {of}',
   'reading.half': 'Half of the water is older than {age}.',
   'reading.halfAbout': 'Half of the water is older than about {age} (range not assessed).',
-  'reading.halfBeyond': 'More than half of the water is older than the record, which began in {year}; its age is not known.',
+  'reading.halfBeyond': 'More than half of the water is older than the record, which began in {month}; its age is not known.',
   'reading.beyond': {
-    one: 'About {count} litre in {of} was already in the ground when records began in {year}; its age is not known.',
-    other: 'About {count} litres in {of} were already in the ground when records began in {year}; their age is not known.',
+    one: 'About {count} litre in {of} was already in the ground when records began in {month} ({range}); its age is not known.',
+    other: 'About {count} litres in {of} were already in the ground when records began in {month} ({range}); their age is not known.',
   },
-  'reading.beyondFewer': 'Fewer than 1 litre in {of} was already in the ground when records began in {year}.',
+  'reading.beyondFewer':
+    'Fewer than 1 litre in {of} was already in the ground when records began in {month} ({range}); its age is not known.',
+  'reading.beyondMore':
+    'More than {count} litres in {of} were already in the ground when records began in {month} ({range}); their age is not known.',
   'reading.assumed':
     'About {count} litres in {of} are given an age only by assuming that the weather before the record was like the weather in it.',
   'reading.withheld': 'No age is given for {date}.',

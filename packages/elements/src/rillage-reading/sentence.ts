@@ -1,4 +1,4 @@
-import type { Range, Reading } from '@rillage/sdk';
+import type { Reading } from '@rillage/sdk';
 import { age, ageSpan, date, moment } from '../shared/format.js';
 import { frequency } from '../shared/frequency.js';
 import type { Language } from '../shared/language.js';
@@ -18,7 +18,7 @@ export interface Statement {
  * @param days  the age limit the sentence is about
  */
 export function statement(speech: Speech, reading: Reading, days: number, timeZone: string): Statement {
-  const written = speech.speaks(reading.language) ? sentences(cleanText(reading.sentence, 2000), speech.tag) : [];
+  const written = speech.speaks(reading.language) ? ownSentences(reading) : [];
   const [lead, ...rest] = written.length ? written : compose(speech, reading, days, timeZone);
   return { lead: lead ?? '', rest };
 }
@@ -27,10 +27,13 @@ export function statement(speech: Speech, reading: Reading, days: number, timeZo
 export function compose(speech: Speech, reading: Reading, days: number, timeZone: string): string[] {
   const day = moment(speech.tag, reading.at, reading.stepDays, timeZone);
   if (reading.status === 'withheld') return [speech.say('reading.withheld', { date: day }), ...reasons(speech, reading)];
-  const year = date(speech.tag, reading.evidence.recordFrom, { year: 'numeric' }, timeZone);
-  return [lead(speech, reading, days, day), median(speech, reading, year), beyond(speech, reading, year), assumed(speech, reading)].filter(
-    (text) => text !== '',
-  );
+  const month = date(speech.tag, reading.evidence.recordFrom, { year: 'numeric', month: 'long' }, timeZone);
+  return [
+    lead(speech, reading, days, day),
+    median(speech, reading, month),
+    beyond(speech, reading, month),
+    assumed(speech, reading),
+  ].filter((text) => text !== '');
 }
 
 /** Why a reading is withheld: known codes in the page's language, others in the file's words. */
@@ -42,13 +45,11 @@ export function reasons(speech: Speech, reading: Reading): string[] {
   });
 }
 
-/** The share the sentence is about: at `days`, or the nearest age limit that has a number. */
+/** The share the sentence is about: at `days` where the record can place it, else at the longest age it can place, else the first. */
 export function headline(reading: Reading, days: number): Reading['younger'][number] | null {
-  const stated = reading.younger.filter((younger) => younger.share !== null);
-  return stated.reduce<Reading['younger'][number] | null>(
-    (best, one) => (!best || Math.abs(one.days - days) < Math.abs(best.days - days) ? one : best),
-    null,
-  );
+  const stated = reading.younger.filter(({ share }) => share !== null);
+  const placed = stated.filter(({ unplaced }) => unplaced <= negligible);
+  return placed.find((one) => one.days === days) ?? placed.at(-1) ?? stated[0] ?? null;
 }
 
 const known = new Set(['noOutflow', 'recordTooShort', 'storageRunsDown', 'preRecordDominates', 'fitNotConverged', 'notAssessed']);
@@ -58,32 +59,36 @@ const negligible = 0.005;
 function lead(speech: Speech, reading: Reading, days: number, day: string): string {
   const younger = headline(reading, days);
   if (!younger || younger.share === null) return speech.say('reading.withheld', { date: day });
-  const { count, of, bound, low, high } = frequency(younger.share, younger.range);
-  const key =
-    bound === 'fewer'
-      ? 'reading.leadFewer'
-      : bound === 'more'
-        ? 'reading.leadMore'
-        : younger.unplaced > negligible
-          ? 'reading.leadAtLeast'
-          : 'reading.lead';
   const water =
     reading.of === 'discharge' ? speech.say('reading.stream') : speech.say('reading.outflow', { of: cleanText(reading.of, 60) });
+  const values = { water, date: day, days: younger.days };
+  if (younger.unplaced > negligible) {
+    const whole = younger.range ?? { low: younger.share, high: younger.share + younger.unplaced };
+    return speech.say('reading.leadBetween', { ...values, low: Math.floor(whole.low * 100), high: Math.ceil(whole.high * 100), of: 100 });
+  }
+  const { count, of, bound, low, high } = frequency(younger.share, younger.range);
+  const key = bound === 'fewer' ? 'reading.leadFewer' : bound === 'more' ? 'reading.leadMore' : 'reading.lead';
   const range = low === null || high === null ? speech.say('amount.unassessed') : speech.say('reading.likely', { low, high, of });
-  return speech.say(key, { count, of, water, date: day, days: younger.days, range });
+  return speech.say(key, { ...values, count, of, range });
 }
 
-function median(speech: Speech, { median: it }: Reading, year: string): string {
+function median(speech: Speech, { median: it }: Reading, month: string): string {
   if (!it) return '';
-  if (it.beyondRecord) return speech.say('reading.halfBeyond', { year });
+  if (it.beyondRecord) return speech.say('reading.halfBeyond', { month });
   if (!it.range) return speech.say('reading.halfAbout', { age: age(speech, it.days) });
   return speech.say('reading.half', { age: ageSpan(speech, it.range.low, it.range.high, it.range.highBeyondRecord) });
 }
 
-function beyond(speech: Speech, { olderThanRecord: { share, range } }: Reading, year: string): string {
-  if (share === null || share <= 0) return '';
-  const { count, of, bound } = frequency(share, range as Range | null);
-  return speech.say(bound === 'fewer' ? 'reading.beyondFewer' : 'reading.beyond', { count, of, year });
+function beyond(speech: Speech, { olderThanRecord: { share, range } }: Reading, month: string): string {
+  if (share === null || Math.max(share, range?.high ?? 0) < negligible) return '';
+  const { count, of, bound, low, high } = frequency(share, range);
+  const sure = low === null || high === null ? speech.say('amount.unassessed') : speech.say('reading.likely', { low, high, of });
+  return speech.say(bound === 'fewer' ? 'reading.beyondFewer' : bound === 'more' ? 'reading.beyondMore' : 'reading.beyond', {
+    count,
+    of,
+    month,
+    range: sure,
+  });
 }
 
 function assumed(speech: Speech, { assumedShare }: Reading): string {
@@ -92,10 +97,7 @@ function assumed(speech: Speech, { assumedShare }: Reading): string {
   return speech.say('reading.assumed', { count, of });
 }
 
-function sentences(text: string, language: string): string[] {
-  if (!text) return [];
-  if (!('Segmenter' in Intl)) return [text];
-  return [...new Intl.Segmenter(language, { granularity: 'sentence' }).segment(text)]
-    .map(({ segment }) => segment.trim())
-    .filter((segment) => segment !== '');
+/** The file's own sentences; one text where it does not give them singly. */
+function ownSentences({ sentence, sentences }: Reading): string[] {
+  return (sentences?.length ? sentences : [sentence]).map((one) => cleanText(one, 1200)).filter((one) => one !== '');
 }

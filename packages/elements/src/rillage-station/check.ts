@@ -27,10 +27,11 @@ export function checkStation(value: unknown): Checked {
   }
 }
 
-/** A distribution that can be drawn, or null: increasing ages, shares between 0 and 1 that do not fall, a range around them. */
+/** A distribution that can be drawn, or null (a step without outflow has none): increasing ages, shares between 0 and 1 that do not fall, a range around them. */
 export function checkDistribution(value: unknown): DistributionWithRange | null {
   try {
-    return value ? distribution(value, 'distribution') : null;
+    const found = value ? distribution(value, 'distribution') : null;
+    return found?.ageDays.length ? found : null;
   } catch {
     return null;
   }
@@ -78,6 +79,7 @@ function reading(value: unknown, at: string): Reading {
     need(['younger', 'older', 'usual'].includes(trend['direction'] as string), `${at}.trend.direction`);
   }
   for (const field of ['sentence', 'caution', 'language']) text(it[field], `${at}.${field}`);
+  if (it['sentences'] !== undefined) for (const one of list(it['sentences'], `${at}.sentences`)) text(one, `${at}.sentences`);
   const evidence = record(it['evidence'], `${at}.evidence`);
   instant(evidence['recordFrom'], `${at}.evidence.recordFrom`);
   instant(evidence['recordTo'], `${at}.evidence.recordTo`);
@@ -95,7 +97,6 @@ function distribution(value: unknown, at: string): DistributionWithRange {
     increasing(shares, `${at}.${field}`, 0, 1, false);
   }
   need((it['low'] === null) === (it['high'] === null), `${at}.low`);
-  need(ages.length > 0, `${at}.ageDays`);
   text(it['of'], `${at}.of`);
   instant(it['at'], `${at}.at`);
   need(share(it['preRecordShare']), `${at}.preRecordShare`);

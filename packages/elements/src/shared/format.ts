@@ -32,27 +32,27 @@ export function percentSpan(speech: Speech, range: { low: number; high: number }
 
 /** An age in the unit people would use: days up to two months, months up to two years, years beyond. */
 export function age(speech: Speech, days: number): string {
-  const { value, unit } = people(days);
-  return number(speech.tag, {
-    style: 'unit',
-    unit,
-    unitDisplay: 'long',
-    maximumFractionDigits: value < 10 && unit === 'year' ? 1 : 0,
-  }).format(value);
+  const unit = unitFor(days);
+  const step = stepFor(days, unit);
+  return inUnit(speech.tag, Math.round(days / lengths[unit] / step) * step, unit);
 }
 
-/** Two ages as one phrase: the unit is said once where both share it. */
+/** Two ages as one phrase in one unit, rounded outwards so that the range is never narrower than it is. */
 export function ageSpan(speech: Speech, low: number, high: number, highBeyondRecord = false): string {
-  const older = (text: string): string => (highBeyondRecord ? speech.say('amount.older', { age: text }) : text);
-  const unit = people(high).unit;
-  const inUnit = low / lengths[unit];
-  const sayUnit = people(low).unit === unit || (inUnit >= 1 && unit !== 'year');
-  if (sayUnit && age(speech, low) === age(speech, high)) return older(age(speech, high));
-  const first =
-    sayUnit && !highBeyondRecord
-      ? number(speech.tag, { maximumFractionDigits: inUnit < 10 && unit === 'year' ? 1 : 0 }).format(inUnit)
-      : age(speech, low);
-  return speech.say('amount.span', { low: first, high: older(age(speech, high)) });
+  const unit = unitFor(high);
+  const step = stepFor(high, unit);
+  const down = Math.floor(low / lengths[unit] / step + tiny) * step;
+  // Beyond the record the upper end is a lower bound, which only rounding down keeps true.
+  const up = (highBeyondRecord ? Math.floor(high / lengths[unit] / step + tiny) : Math.ceil(high / lengths[unit] / step - tiny)) * step;
+  const older = inUnit(speech.tag, up, unit);
+  const first = down > 0 || low <= 0 ? number(speech.tag, { maximumFractionDigits: 1 }).format(down) : null;
+  if (!highBeyondRecord)
+    return first === null
+      ? speech.say('amount.span', { low: age(speech, low), high: older })
+      : down === up
+        ? older
+        : speech.say('amount.span', { low: first, high: older });
+  return speech.say('amount.span', { low: age(speech, low), high: speech.say('amount.older', { age: older }) });
 }
 
 /** The day (or, below daily steps, the moment) a step stands for, from the instant at its end. */
@@ -84,13 +84,19 @@ export function number(language: string, options: Intl.NumberFormatOptions): Int
 
 export const msPerDay = 86_400_000;
 
-const tiny = 1e-9;
+// So that eight months computed as 8.0000001 stay eight.
+const tiny = 1e-6;
 const formats = new Map<string, Intl.NumberFormat>();
-// Mean Gregorian month and year.
-const lengths = { day: 1, month: 30.436875, year: 365.2425 };
+// A year of 365.25 days and its twelfth, as the reading's own sentence counts them.
+const lengths = { day: 1, month: 30.4375, year: 365.25 };
 
-function people(days: number): { value: number; unit: 'day' | 'month' | 'year' } {
-  const unit = days < 60 ? 'day' : days < 730 ? 'month' : 'year';
-  const value = days / lengths[unit];
-  return { value: unit === 'year' && value < 10 ? Math.round(value * 10) / 10 : Math.round(value), unit };
-}
+type AgeUnit = 'day' | 'month' | 'year';
+
+const unitFor = (days: number): AgeUnit => (days < 60 ? 'day' : days < 731 ? 'month' : 'year');
+
+/** Tenths below three days and below ten years, whole numbers elsewhere. */
+const stepFor = (days: number, unit: AgeUnit): number =>
+  (unit === 'day' && days < 3) || (unit === 'year' && days < 10 * lengths.year) ? 0.1 : 1;
+
+const inUnit = (language: string, value: number, unit: AgeUnit): string =>
+  number(language, { style: 'unit', unit, unitDisplay: 'long', maximumFractionDigits: 1 }).format(value);

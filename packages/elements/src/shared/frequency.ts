@@ -15,7 +15,7 @@ export interface Frequency {
  */
 export function frequency(share: number, range: { low: number; high: number } | null): Frequency {
   const narrow = range !== null && range.high - range.low < narrowest;
-  const of = share < 0.15 || share > 0.85 || narrow ? 100 : 10;
+  const of = share < 0.05 || share > 0.95 || narrow ? 100 : 10;
   const exact = share * of;
   const bound = of === 100 && exact < 1 ? 'fewer' : of === 100 && exact > 99 ? 'more' : null;
   const count = bound === 'fewer' ? 1 : bound === 'more' ? 99 : Math.round(exact);
