@@ -47,7 +47,11 @@ function publicElement(element, tags) {
   const members = (element.members ?? []).filter(
     (member) => !/^[_#]/.test(member.name) && (member.privacy ?? 'public') === 'public' && !inLit.has(member.name),
   );
-  return { ...element, members, ...(tags.has(element.name) ? { tagName: tags.get(element.name) } : {}) };
+  // The analyzer takes the internal state of an element for an attribute.
+  const attributes = (element.attributes ?? []).filter(
+    (each) => !each.fieldName || members.some((member) => member.name === each.fieldName),
+  );
+  return { ...element, members, attributes, ...(tags.has(element.name) ? { tagName: tags.get(element.name) } : {}) };
 }
 
 const isClassExport = (module) => (each) => each.kind === 'js' && module.declarations.some((element) => element.name === each.name);
