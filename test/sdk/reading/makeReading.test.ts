@@ -30,11 +30,11 @@ describe('makeReading(run)', () => {
     expect(reading.median).toEqual({ days: 330, beyondRecord: false, range: null });
     expect(reading.olderThanRecord).toEqual({ share: 0.1, range: null });
     expect(reading.sentences).toEqual([
-      'About 3 litres in 10 of the stream on March 14, 2025 fell as rain within the last 30 days.',
-      'Half of the water is older than about 11 months.',
-      'About 1 litre in 10 was already in the ground when records began in March 2021; its age is not known.',
-      'How far off these numbers may be has not been assessed: they come from a single model run.',
+      'About 3 litres in 10 of the stream on March 14, 2025 fell as rain within the last 30 days (range not assessed).',
+      'Half of the water is older than about 11 months (range not assessed).',
+      'About 1 litre in 10 was already in the ground when records began in March 2021 (range not assessed); its age is not known.',
     ]);
+    expect(reading.confidenceBecause).toEqual(['From a single model run; the range is not assessed.']);
     expect(reading.caution).toMatch(/not a basis for drinking-water, bathing or emergency decisions/);
     expect(reading.sentence).toBe(reading.sentences?.join(' '));
   });

@@ -12,7 +12,7 @@ export interface Speaker {
   language: string;
 }
 
-type Told = Pick<Reading, 'of' | 'at' | 'stepDays' | 'younger' | 'median' | 'olderThanRecord' | 'assumedShare' | 'confidence'>;
+type Told = Pick<Reading, 'of' | 'at' | 'stepDays' | 'younger' | 'median' | 'olderThanRecord' | 'assumedShare'>;
 
 /** The plain sentences of a reading that is given. */
 export function givenSentences(speaker: Speaker, reading: Told, recordStart: string, recordDays: number): string[] {
@@ -22,7 +22,6 @@ export function givenSentences(speaker: Speaker, reading: Told, recordStart: str
     reading.median ? medianSentence(speaker, reading.median, recordDays) : null,
     olderSentence(speaker, reading.olderThanRecord, recordStart),
     reading.assumedShare > WORTH_SAYING ? assumedSentence(speaker, reading.assumedShare) : null,
-    reading.confidence === 'notAssessed' ? say(speaker.messages, speaker.language, 'notAssessed') : null,
   ].filter((sentence) => sentence !== null);
 }
 
@@ -52,7 +51,12 @@ function shareSentence({ messages, language }: Speaker, reading: Told, { days, s
 function medianSentence({ messages, language }: Speaker, median: MedianAge, recordDays: number): string {
   const record = ageText(recordDays, language);
   if (median.beyondRecord) return say(messages, language, 'medianBeyond', { age: record });
-  if (!median.range) return say(messages, language, 'medianAbout', { age: ageText(median.days, language) });
+  if (!median.range) {
+    return say(messages, language, 'medianAbout', {
+      age: ageText(median.days, language),
+      sure: say(messages, language, 'sureNotAssessed'),
+    });
+  }
   if (median.range.highBeyondRecord)
     return say(messages, language, 'medianRangeOpen', { low: ageText(median.range.low, language), age: record });
   return say(messages, language, 'medianRange', ageRangeTexts(median.range.low, median.range.high, language));
@@ -77,7 +81,9 @@ function sharePhrase(
 ): string {
   const amount = litres(share, range);
   const base = amount.kind === 'about' ? amount.base : 100;
-  const sure = range ? say(messages, language, 'sureRange', { ...litresRange(range, base), base }) : '';
+  const sure = range
+    ? say(messages, language, 'sureRange', { ...litresRange(range, base), base })
+    : say(messages, language, 'sureNotAssessed');
   if (amount.kind !== 'about') return say(messages, language, keys[amount.kind], { ...values, sure });
   return say(messages, language, keys.about, { ...values, sure, count: amount.count, base });
 }

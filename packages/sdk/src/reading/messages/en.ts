@@ -15,7 +15,7 @@ export const english = {
   shareBetween:
     'Between {low} and {high} litres in {base} of {water} on {date} fell as rain within the last {period}{sure}; the record is too short to say more.',
 
-  medianAbout: 'Half of the water is older than about {age}.',
+  medianAbout: 'Half of the water is older than about {age}{sure}.',
   medianRange: 'Half of the water is older than {low} to {high}.',
   medianRangeOpen: 'Half of the water is older than {low}, and perhaps older than the record itself, which goes back {age}.',
   medianBeyond: 'Half of the water or more is older than the record, which goes back {age}; by how much is not known.',
@@ -35,7 +35,7 @@ export const english = {
   assumedNearlyAll: 'More than 99 litres in 100 rest on assumed weather from before the record.',
 
   sureRange: ' (likely between {low} and {high} in {base})',
-  notAssessed: 'How far off these numbers may be has not been assessed: they come from a single model run.',
+  sureNotAssessed: ' (range not assessed)',
 
   withheld: 'No age is given for {date}: {reason}.',
   withheldNoOutflow: 'there was no outflow',
