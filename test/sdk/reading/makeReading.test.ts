@@ -174,9 +174,12 @@ describe('makeReading(weighted runs)', () => {
   });
 
   it('follows the weights', () => {
-    const two = [{ shares: { 30: 0.2 } }, { shares: { 30: 0.6 } }];
-    expect(makeReading(ensemble(two, [0.99, 0.01])).younger[0]?.share).toBeCloseTo(0.2, 1);
-    expect(makeReading(ensemble(two, [1, 99])).younger[0]?.share).toBeCloseTo(0.6, 1);
+    const members = Array.from({ length: 40 }, (_, i) => ({ shares: { 30: i < 20 ? 0.2 : 0.6 } }));
+    const leaning = (first: number): number[] => members.map((_, i) => (i < 20 ? first : 1 - first));
+    expect(makeReading(ensemble(members, leaning(0.9))).younger[0]?.share).toBe(0.2);
+    expect(makeReading(ensemble(members, leaning(0.1))).younger[0]?.share).toBe(0.6);
+    expect(makeReading(ensemble(members, leaning(0.9))).younger[0]?.range).toEqual({ low: 0.2, high: 0.6 });
+    expect(makeReading(ensemble(members, leaning(0.99))).younger[0]?.range).toEqual({ low: 0.2, high: 0.2 });
   });
 
   it('keeps the upper end open where some members lie beyond the record', () => {
