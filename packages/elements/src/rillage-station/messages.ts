@@ -18,5 +18,4 @@ export const stationMessages = {
   'station.truncated': 'the file is incomplete or damaged.',
   'station.notStation': 'the file is not a station file ({at}).',
   'station.newer': 'the file is of a newer version ({at}) than this page understands (1).',
-  'station.noData': 'No station was named.',
 } as const;

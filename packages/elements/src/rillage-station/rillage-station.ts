@@ -1,4 +1,4 @@
-import { LitElement, css, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import { LitElement, css, html, type PropertyValues, type TemplateResult } from 'lit';
 import type { Reading, Station } from '@rillage/sdk';
 import { date, moment, msPerDay } from '../shared/format.js';
 import { Language } from '../shared/language.js';
@@ -33,7 +33,7 @@ export class RillageStation extends LitElement {
       :host {
         container-type: normal;
       }
-      [part='notice']:not(:empty) {
+      .said {
         border-block: 1px solid var(--_ink);
         padding-block: 0.5em;
         margin-block-end: 1.5em;
@@ -147,8 +147,15 @@ export class RillageStation extends LitElement {
   override render(): TemplateResult {
     const notes = this.#notes();
     const quiet = this.#view.state === 'loading' || this.#view.state === 'empty';
-    return html`<div part="notice" role="status" lang=${this.#language.tag} dir=${this.#language.direction} ?data-quiet=${quiet}>
-        ${notes.length ? notes.map((note) => html`<p>${note}</p>`) : nothing}
+    return html`<div
+        part="notice"
+        role="status"
+        class=${notes.length ? 'said' : ''}
+        lang=${this.#language.tag}
+        dir=${this.#language.direction}
+        ?data-quiet=${quiet}
+      >
+        ${notes.map((note) => html`<p>${note}</p>`)}
       </div>
       <slot></slot>`;
   }

@@ -85,8 +85,12 @@ export const frameStyles = css`
   .buttons {
     display: flex;
     flex-wrap: wrap;
+    align-items: center;
     gap: 0.5rem;
     margin-block: 1rem 0.75rem;
+  }
+  .buttons.bare {
+    margin: 0;
   }
   .picture {
     position: relative;
