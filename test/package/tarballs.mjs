@@ -1,7 +1,7 @@
 import { cpSync, existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { dirname, join } from 'node:path';
-import { at } from '../../demo-site/tools/paths.mjs';
+import { dirname, join, relative } from 'node:path';
+import { at, filesUnder } from '../../demo-site/tools/paths.mjs';
 import { expectSuccess, run } from '../stages/tally.mjs';
 
 export const packageNames = ['sdk', 'elements'];
@@ -30,14 +30,27 @@ export async function installTarballs() {
 
 export const manifestOf = (project, name) => JSON.parse(readFileSync(join(project, 'node_modules/@rillage', name, 'package.json'), 'utf8'));
 
-/** Every address that a package's exports map offers: `@rillage/sdk`, `@rillage/sdk/worker`. Patterns are left out. */
+/** Every address that a package's exports map offers: `@rillage/sdk`, `@rillage/sdk/worker`; a pattern as all the files it fits. */
 export function publicPaths(project) {
   return packageNames.flatMap((name) =>
-    Object.keys(manifestOf(project, name).exports)
-      .filter((path) => !path.includes('*'))
+    Object.entries(manifestOf(project, name).exports)
+      .flatMap(([path, target]) => (path.includes('*') ? expanded(project, name, path, target.default ?? target) : [path]))
       .map((path) => `@rillage/${name}${path.slice(1)}`),
   );
 }
+
+function expanded(project, name, path, target) {
+  const folder = join(project, 'node_modules/@rillage', name);
+  const [before, ...after] = target.slice(2).split('*');
+  // The same text stands for every star.
+  const pattern = new RegExp(`^${[before, ...after].map(escaped).join('(.+)')}$`);
+  return filesUnder(folder)
+    .map((file) => pattern.exec(relative(folder, file).replaceAll('\\', '/')))
+    .filter((match) => match && new Set(match.slice(1)).size === 1)
+    .map((match) => path.replaceAll('*', match[1]));
+}
+
+const escaped = (text) => text.replace(/[.*+?^${}()|[\]\\/]/g, '\\$&');
 
 function copyDependencies(packageFolder, project) {
   const { dependencies = {} } = JSON.parse(readFileSync(join(packageFolder, 'package.json'), 'utf8'));

@@ -50,7 +50,11 @@ const SHOWN_AT_MOST = 5;
 
 /** The one formatter of messages: place, what was expected, what was received, what to do. */
 export function describeIssue(issue: Issue): string {
-  const place = [issue.path, issue.step === undefined ? undefined : `step ${issue.step}`, issue.row === undefined ? undefined : `row ${issue.row}`]
+  const place = [
+    issue.path,
+    issue.step === undefined ? undefined : `step ${issue.step}`,
+    issue.row === undefined ? undefined : `row ${issue.row}`,
+  ]
     .filter((part) => part !== undefined)
     .join(', ');
   const parts = [`[${issue.code}]`];
@@ -88,5 +92,6 @@ export function throwIfAny(issues: readonly Issue[]): void {
 
 /** Throws `aborted` if the caller's signal has been raised. */
 export function throwIfAborted(signal: AbortSignal | undefined): void {
-  if (signal?.aborted) throw new RillageError({ code: 'aborted', hint: 'The caller ended this call through its signal.' }, { cause: signal.reason });
+  if (signal?.aborted)
+    throw new RillageError({ code: 'aborted', hint: 'The caller ended this call through its signal.' }, { cause: signal.reason });
 }
