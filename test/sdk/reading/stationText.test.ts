@@ -62,8 +62,8 @@ describe('readStation(text)', () => {
   it.each([
     ['empty-file', ''],
     ['empty-file', ' \n\t'],
-    ['html', '<!doctype html><title>404</title>'],
-    ['html', '\ufeff  <html>'],
+    ['html-instead', '<!doctype html><title>404</title>'],
+    ['html-instead', '\ufeff  <html>'],
     ['not-json', 'kind=rillage-station'],
     ['not-json', '{"a":1} trailing'],
     ['truncated', '{"kind":"rillage-station",'],
@@ -184,6 +184,6 @@ describe('readReading(writeReading(reading))', () => {
     ['not-a-reading', text],
     ['newer-version', '{"kind":"rillage-reading","version":7}'],
     ['shape', '{"kind":"rillage-reading","version":1}'],
-    ['html', '<p>'],
+    ['html-instead', '<p>'],
   ])('refuses with %s', (code, given) => expect(codeOf(() => readReading(given))).toBe(code));
 });

@@ -16,7 +16,7 @@ export const DEFAULT_MAX_BYTES = 20 * MEGABYTE;
 
 /**
  * JSON from outside as plain data, in time linear in its length.
- * @throws RillageError 'not-text', 'too-large', 'empty-file', 'html', 'truncated', 'not-json', 'too-deep', 'forbidden-key'
+ * @throws RillageError 'not-text', 'too-large', 'empty-file', 'html-instead', 'truncated', 'not-json', 'too-deep', 'forbidden-key'
  */
 export function parseJson(text: unknown, { what, maxBytes = DEFAULT_MAX_BYTES }: ParseOptions): unknown {
   if (typeof text !== 'string') throw new RillageError({ code: 'not-text', expected: `the text of ${what}`, received: typeof text });
@@ -35,7 +35,7 @@ export function parseJson(text: unknown, { what, maxBytes = DEFAULT_MAX_BYTES }:
     throw new RillageError({ code: 'empty-file', expected: what, received: 'nothing', hint: 'The file or the answer is empty.' });
   if (first.startsWith('<')) {
     throw new RillageError({
-      code: 'html',
+      code: 'html-instead',
       expected: `${what} in JSON`,
       received: first.slice(0, 60),
       hint: 'The server answered with a page, often its error or login page; check the address.',

@@ -24,7 +24,7 @@ export function writeStation(station: Station): string {
 
 /**
  * A station from text that may be anything: checked for size, form, version, seal and shape, in that order; linear in its length.
- * @throws RillageError 'not-text', 'too-large', 'empty-file', 'html', 'truncated', 'not-json', 'too-deep', 'forbidden-key', 'not-a-station',
+ * @throws RillageError 'not-text', 'too-large', 'empty-file', 'html-instead', 'truncated', 'not-json', 'too-deep', 'forbidden-key', 'not-a-station',
  *   'newer-version', 'unknown-version', 'seal-missing', 'seal-broken', 'shape'
  */
 export function readStation(text: string, options: ReadTextOptions = {}): Station {
