@@ -42,7 +42,7 @@ export function gammaUniform(a: number, x: number, side: 1 | -1): number {
  * Taylor coefficients of f(η) = η/(λ − 1). With μ = λ − 1 = Σ α_k η^k the definition of η gives μ′ = f + η and f·μ = η, a
  * recurrence for both, so no table has to be carried.
  */
-const COEFFICIENTS: Float64Array = taylorCoefficients();
+const COEFFICIENTS: Float64Array = /* @__PURE__ */ taylorCoefficients();
 
 function taylorCoefficients(): Float64Array {
   const f = new Float64Array(TERMS + 1);
