@@ -1,7 +1,10 @@
 import { at } from '../../demo-site/tools/paths.mjs';
 import { definitions, elementBundle } from '../../rollup.config.mjs';
 
-/** What each build may weigh and what must not be in it. A function, as entries of elements are made of what the build has written. */
+/**
+ * What each build may weigh and what must not be in it. A function, as entries of elements are made of what the build has written.
+ * `later` is left out of the weight: what an application's bundler puts in a file of its own, fetched only by readers who need it.
+ */
 export function budgets() {
   const defining = definitions();
   const of = (...tags) => tags.map((tag) => at(`packages/elements/dist/${tag}/define.js`));
@@ -17,12 +20,14 @@ export function budgets() {
     {
       name: 'reading alone',
       limitKb: 12,
+      later: [languages],
       bundle: elementBundle('rillage-reading', of('rillage-station', 'rillage-reading')),
       without: [/uplot/, engine, outside('sdk', 'elements', 'lit', 'idb-keyval')],
     },
     {
       name: 'one plot',
       limitKb: 36,
+      later: [languages],
       bundle: elementBundle('rillage-age-plot', of('rillage-age-plot')),
       without: [engine, outside('sdk', 'elements', 'lit', 'uplot')],
     },
@@ -56,6 +61,9 @@ function core() {
     file: at('.cache/core.min.js'),
   };
 }
+
+/** Messages of the languages other than English. */
+const languages = /elements[\\/]dist[\\/]languages[\\/]/;
 
 const room = (...names) => new RegExp(`packages[\\\\/]sdk[\\\\/]dist[\\\\/](${names.join('|')})[\\\\/]`);
 
