@@ -18,16 +18,20 @@ const looks = {
   'phone-320': { width: 320 },
   forced: { width: 900, features: forced },
   'forced-dark': { width: 900, features: [...forced, ...dark] },
+  'plot-320': { width: 320, only: 'rillage-age-plot' },
+  'plot-arabic': { width: 700, lang: 'ar', only: 'rillage-age-plot' },
+  'plot-forced': { width: 700, features: forced, only: 'rillage-age-plot' },
   german: { width: 900, lang: 'de' },
   arabic: { width: 900, lang: 'ar' },
   'arabic-320': { width: 320, lang: 'ar' },
   'large-text': { width: 360, fontSize: '200%' },
-  drops: { width: 900, plot: { view: 'drops' } },
-  density: { width: 900, plot: { view: 'density' } },
-  linear: { width: 900, plot: { scale: 'linear' } },
-  table: { width: 900, plot: { table: true } },
+  drops: { width: 900, only: 'rillage-age-plot', plot: { view: 'drops' } },
+  density: { width: 900, only: 'rillage-age-plot', plot: { view: 'density' } },
+  linear: { width: 900, only: 'rillage-age-plot', plot: { scale: 'linear' } },
+  table: { width: 900, only: 'rillage-age-plot', plot: { table: true } },
   cursor: {
     width: 900,
+    only: 'rillage-age-plot',
     keys: ['Home', 'ArrowRight', 'ArrowRight', 'ArrowRight', 'ArrowRight', 'ArrowRight', 'ArrowRight', 'ArrowRight', 'ArrowRight'],
   },
   bare: { width: 900, change: bare },
@@ -81,7 +85,8 @@ async function take(name, look) {
   if (look.keys) await new Promise((settled) => setTimeout(settled, 300));
   if (look.print) await page.pdf({ path: `${folder}/${name}.pdf`, format: 'A4', printBackground: true });
   if (look.print) await page.emulateMediaType('print');
-  await page.screenshot({ path: `${folder}/${name}.png`, fullPage: true });
+  const part = look.only ? await page.$(look.only) : null;
+  await (part ?? page).screenshot({ path: `${folder}/${name}.png`, ...(part ? {} : { fullPage: true }) });
   const overflow =
     look.script === false ? 0 : await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
   console.log(`${name}: ${folder}/${name}.png${overflow > 0 ? `, ${overflow} px too wide` : ''}`);

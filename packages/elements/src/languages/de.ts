@@ -19,13 +19,13 @@ export const messages: Messages = {
   'reading.stream': 'Bachwassers',
   'reading.outflow': 'Wassers, das als {of} abfließt,',
   'reading.lead': {
-    one: 'Etwa {count} von {of} Litern des {water} am {date} fiel in den letzten {days} Tagen als Regen ({range}).',
-    other: 'Etwa {count} von {of} Litern des {water} am {date} fielen in den letzten {days} Tagen als Regen ({range}).',
+    one: 'Etwa {count} von {of} Litern des {water} am {date} fiel innerhalb der letzten {period} als Regen ({range}).',
+    other: 'Etwa {count} von {of} Litern des {water} am {date} fielen innerhalb der letzten {period} als Regen ({range}).',
   },
   'reading.leadBetween':
-    'Zwischen {low} und {high} von {of} Litern des {water} am {date} fielen in den letzten {days} Tagen als Regen; für mehr ist die Aufzeichnung zu kurz.',
-  'reading.leadFewer': 'Weniger als 1 von {of} Litern des {water} am {date} fiel in den letzten {days} Tagen als Regen ({range}).',
-  'reading.leadMore': 'Mehr als {count} von {of} Litern des {water} am {date} fielen in den letzten {days} Tagen als Regen ({range}).',
+    'Zwischen {low} und {high} von {of} Litern des {water} am {date} fielen innerhalb der letzten {period} als Regen; für mehr ist die Aufzeichnung zu kurz.',
+  'reading.leadFewer': 'Weniger als 1 von {of} Litern des {water} am {date} fiel innerhalb der letzten {period} als Regen ({range}).',
+  'reading.leadMore': 'Mehr als {count} von {of} Litern des {water} am {date} fielen innerhalb der letzten {period} als Regen ({range}).',
   'reading.likely': 'wahrscheinlich zwischen {low} und {high} von {of}',
   'reading.half': 'Die Hälfte des Wassers ist älter als {age}.',
   'reading.halfAbout': 'Die Hälfte des Wassers ist älter als etwa {age} (Bereich nicht bestimmt).',

@@ -1,4 +1,4 @@
-import { svg, type TemplateResult } from 'lit';
+import { nothing, svg, type TemplateResult } from 'lit';
 import { ageClass, classLimits } from '../shared/age-ramp.js';
 import { hatchPath } from '../shared/hatch.js';
 
@@ -58,13 +58,13 @@ export interface AgeMark {
 }
 
 /** Axes: shares at the left, human ages below (in two rows where they would touch), the ramp between, the hatched ground at the right. */
-export function axes(frame: Frame, marks: AgeMark[], shareLabels: { share: number; label: string }[]): TemplateResult {
+export function axes(frame: Frame, marks: AgeMark[], shareLabels: { at: number; label: string }[]): TemplateResult {
   const { left, right, edge, top, bottom, em, x, y } = frame;
   const rampTop = bottom + 0.35 * em;
   return svg`
     ${shareLabels.map(
-      ({ share, label }) => svg`<line class="hair" x1=${left} x2=${right} y1=${y(share)} y2=${y(share)} />
-        <text class="end" x=${left - 0.5 * em} y=${y(share) + 0.35 * em}>${label}</text>`,
+      ({ at, label }) => svg`<line class="hair" x1=${left} x2=${right} y1=${y(at)} y2=${y(at)} />
+        <text class="end" x=${left - 0.5 * em} y=${y(at) + 0.35 * em}>${label}</text>`,
     )}
     ${classSlices(frame).map(
       ({ from, to, className }) =>
@@ -80,17 +80,23 @@ export function axes(frame: Frame, marks: AgeMark[], shareLabels: { share: numbe
   `;
 }
 
-/** The share beyond the record: hatched where it is sure, more faintly where it lies within its range, and never a curve. */
-export function beyondRecord(frame: Frame, share: number, range: { low: number; high: number } | null): TemplateResult {
-  const { edge, right, y } = frame;
+/**
+ * The share beyond the record: hatched where it is sure, more faintly where it lies within its range, and never a curve.
+ * @param place  whether it hangs from the whole or stands on the axis
+ * @param top    share at the top of the axis
+ */
+export function beyondRecord(
+  { edge, right, y }: Frame,
+  { share, range, place, top }: { share: number; range: { low: number; high: number } | null; place: 'hanging' | 'standing'; top: number },
+): TemplateResult {
   const width = right - edge;
-  const block = (from: number, to: number, name: string): TemplateResult =>
-    to - from > 0.0005
-      ? svg`<rect class="ground ${name}" x=${edge} width=${width} y=${y(to)} height=${y(from) - y(to)} />
-          <path class="hatch ${name}" d=${hatchPath(edge, y(to), width, y(from) - y(to))} />`
-      : svg``;
-  if (!range) return block(1 - share, 1, '');
-  return svg`${block(1 - range.high, 1 - range.low, 'faint')}${block(1 - range.low, 1, '')}`;
+  const block = (from: number, to: number, name: string): TemplateResult | typeof nothing => {
+    const [upper, lower] = place === 'hanging' ? [y(1 - from), y(1 - to)] : [y(to / top), y(from / top)];
+    if (lower - upper < 0.5) return nothing;
+    return svg`<rect class="ground ${name}" x=${edge} width=${width} y=${upper} height=${lower - upper} />
+      <path class="hatch ${name}" d=${hatchPath(edge, upper, width, lower - upper)} />`;
+  };
+  return range ? svg`${block(range.low, range.high, 'faint')}${block(0, range.low, '')}` : svg`${block(0, share, '')}`;
 }
 
 function inRows(marks: AgeMark[], { x, em, left, right }: Frame): (AgeMark & { row: number })[] {

@@ -14,6 +14,8 @@ export function curveView({ distribution, middle, low, high, frame, speech }: Dr
   return {
     series: series.length,
     places: stops.map(x),
+    top: 1,
+    beyond: 'hanging',
     about: speech.say(low ? 'plot.aboutCurve' : 'plot.aboutCurveBare'),
     describe: (index, point) => {
       const days = stops[point]!;

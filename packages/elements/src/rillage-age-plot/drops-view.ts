@@ -32,6 +32,8 @@ export function dropsView({ middle, low, high, frame, speech }: Drawn): View {
   return {
     series: 1,
     places: all.map(({ middle: days }) => place(days)),
+    top: 1,
+    beyond: 'hanging',
     about: speech.say(low ? 'plot.aboutDrops' : 'plot.aboutDropsBare'),
     describe: (_, point) => {
       const { middle: days, range } = all[point]!;
@@ -41,9 +43,12 @@ export function dropsView({ middle, low, high, frame, speech }: Drawn): View {
     draw: (_, point) =>
       svg`${all.map((drop, index) => {
         const at = { x: place(drop.middle), y: y((index + 0.5) / drops), radius };
-        const ends = drop.range && { from: place(drop.range.low), to: drop.range.high <= recordDays ? x(drop.range.high) : right };
+        const ends = drop.range && {
+          from: Math.min(edge, place(drop.range.low)),
+          to: drop.range.high <= recordDays ? x(drop.range.high) : edge,
+        };
         return svg`
-        ${ends ? svg`<line class="range" x1=${ends.from} x2=${ends.to} y1=${at.y} y2=${at.y} />` : nothing}
+        ${ends && ends.from < ends.to ? svg`<line class="range" x1=${ends.from} x2=${ends.to} y1=${at.y} y2=${at.y} />` : nothing}
         ${drop.middle <= recordDays ? svg`<path class="age-${ageClass(drop.middle)} ink" d=${dropPath(at)} />` : hollow(at)}
         ${index === point ? svg`<circle class="cursor" cx=${at.x} cy=${at.y} r=${radius + 4} />` : nothing}`;
       })}`,

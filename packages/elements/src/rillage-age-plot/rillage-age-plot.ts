@@ -152,9 +152,9 @@ export class RillageAgePlot extends LitElement {
           ${axes(
             frame,
             ageMarks(language, frame),
-            shares.map((share) => ({ share, label: number(language.tag, { style: 'percent' }).format(share) })),
+            quarters.map((at) => ({ at, label: number(language.tag, { style: 'percent' }).format(at * shown.top) })),
           )}
-          ${beyondRecord(frame, distribution.preRecordShare, distribution.preRecordRange)}
+          ${beyondRecord(frame, { share: distribution.preRecordShare, range: distribution.preRecordRange, place: shown.beyond, top: shown.top })}
           <text class="end" x=${frame.right} y=${frame.top - 0.7 * frame.em}>${this.#beyondLabel(distribution)}</text>
           ${shown.draw(line, point)}
         </svg>`,
@@ -236,7 +236,7 @@ export class RillageAgePlot extends LitElement {
 }
 
 const views = { curve: curveView, density: densityView, drops: dropsView };
-const shares = [0, 0.25, 0.5, 0.75, 1];
+const quarters = [0, 0.25, 0.5, 0.75, 1];
 
 declare global {
   interface HTMLElementTagNameMap {

@@ -22,6 +22,13 @@ export const agePlotStyles = css`
   .middle {
     text-anchor: middle;
   }
+  /* The picture runs from young at the left to old at the right in every language; its words keep their own direction. */
+  [dir='rtl'] text {
+    direction: rtl;
+  }
+  [dir='rtl'] .end {
+    text-anchor: start;
+  }
   .hair {
     stroke: var(--_hairline);
     stroke-width: 0.75;

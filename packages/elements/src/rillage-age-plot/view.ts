@@ -15,6 +15,10 @@ export interface View {
   describe: (series: number, point: number) => string;
   /** @param point  where the cursor stands, or null */
   draw: (series: number, point: number | null) => TemplateResult;
+  /** Share at the top of the axis. */
+  top: number;
+  /** Where the share beyond the record is drawn: hanging from the whole, as what the curve leaves, or standing as one more bar. */
+  beyond: 'hanging' | 'standing';
   about: string;
   columns: string[];
   rows: string[][];

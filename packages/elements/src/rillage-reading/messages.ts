@@ -6,13 +6,13 @@ export const readingMessages = {
   'reading.stream': 'the stream',
   'reading.outflow': 'the water leaving as {of}',
   'reading.lead': {
-    one: 'About {count} litre in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
-    other: 'About {count} litres in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
+    one: 'About {count} litre in {of} of {water} on {date} fell as rain within the last {period} ({range}).',
+    other: 'About {count} litres in {of} of {water} on {date} fell as rain within the last {period} ({range}).',
   },
   'reading.leadBetween':
-    'Between {low} and {high} litres in {of} of {water} on {date} fell as rain within the last {days} days; the record is too short to say more.',
-  'reading.leadFewer': 'Fewer than 1 litre in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
-  'reading.leadMore': 'More than {count} litres in {of} of {water} on {date} fell as rain within the last {days} days ({range}).',
+    'Between {low} and {high} litres in {of} of {water} on {date} fell as rain within the last {period}; the record is too short to say more.',
+  'reading.leadFewer': 'Fewer than 1 litre in {of} of {water} on {date} fell as rain within the last {period} ({range}).',
+  'reading.leadMore': 'More than {count} litres in {of} of {water} on {date} fell as rain within the last {period} ({range}).',
   'reading.likely': 'likely between {low} and {high} in {of}',
   'reading.half': 'Half of the water is older than {age}.',
   'reading.halfAbout': 'Half of the water is older than about {age} (range not assessed).',

@@ -1,5 +1,5 @@
 import type { Reading } from '@rillage/sdk';
-import { age, ageSpan, date, moment } from '../shared/format.js';
+import { age, ageSpan, date, dayCount, moment } from '../shared/format.js';
 import { frequency } from '../shared/frequency.js';
 import type { Language } from '../shared/language.js';
 import { cleanText } from '../shared/text.js';
@@ -61,7 +61,7 @@ function lead(speech: Speech, reading: Reading, days: number, day: string): stri
   if (!younger || younger.share === null) return speech.say('reading.withheld', { date: day });
   const water =
     reading.of === 'discharge' ? speech.say('reading.stream') : speech.say('reading.outflow', { of: cleanText(reading.of, 60) });
-  const values = { water, date: day, days: younger.days };
+  const values = { water, date: day, period: dayCount(speech, younger.days) };
   if (younger.unplaced > negligible) {
     const whole = younger.range ?? { low: younger.share, high: younger.share + younger.unplaced };
     return speech.say('reading.leadBetween', { ...values, low: Math.floor(whole.low * 100), high: Math.ceil(whole.high * 100), of: 100 });

@@ -37,6 +37,9 @@ export function age(speech: Speech, days: number): string {
   return inUnit(speech.tag, Math.round(days / lengths[unit] / step) * step, unit);
 }
 
+/** A limit as whole days, however many. */
+export const dayCount = (speech: Speech, days: number): string => inUnit(speech.tag, days, 'day');
+
 /** Two ages as one phrase in one unit, rounded outwards so that the range is never narrower than it is. */
 export function ageSpan(speech: Speech, low: number, high: number, highBeyondRecord = false): string {
   const unit = unitFor(high);
