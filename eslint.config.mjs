@@ -36,6 +36,18 @@ const sdkSyntax = [
   ban("CallExpression[callee.name='Date']", 'The SDK has no clock; take the time as an argument.'),
   ban("CallExpression[callee.name='fetch']", 'The SDK uses no network; take the text as an argument.'),
 ];
+const oneEngineOnly = [
+  'process',
+  'Buffer',
+  'require',
+  'global',
+  '__dirname',
+  'window',
+  'document',
+  'navigator',
+  'localStorage',
+  'Deno',
+].map((name) => ({ name, message: 'The SDK runs in browsers, Node and Deno alike; only workers/ may look at where it runs.' }));
 const elementSyntax = [
   ban('AssignmentExpression[left.property.name=/^(innerHTML|outerHTML)$/]', 'Refused by trusted types; use a template or textContent.'),
   ban("CallExpression[callee.property.name='insertAdjacentHTML']", 'Refused by trusted types; use a template.'),
@@ -131,6 +143,7 @@ export default typescript.config(
     rules: {
       'rillage/arrows': ['error', { root: at('packages/sdk/src'), rooms, packages: [] }],
       'no-restricted-syntax': ['error', ...sdkSyntax],
+      'no-restricted-globals': ['error', ...oneEngineOnly],
       'no-console': 'error',
     },
   },
@@ -139,6 +152,7 @@ export default typescript.config(
     rules: {
       'rillage/arrows': ['error', { root: at('packages/sdk/src'), rooms, packages: ['node:worker_threads'] }],
       'no-restricted-syntax': 'off',
+      'no-restricted-globals': 'off',
     },
   },
   {

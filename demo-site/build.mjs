@@ -4,6 +4,7 @@
  */
 import { pathToFileURL } from 'node:url';
 import { buildBundles } from './tools/bundles.mjs';
+import { writeElementTypes } from './tools/element-types.mjs';
 import { writeLicences } from './tools/licences.mjs';
 import { publishLibrary } from './tools/library.mjs';
 import { alone } from './tools/lock.mjs';
@@ -45,6 +46,7 @@ const steps = [
       ),
   ],
   ['elements manifest', buildManifest],
+  ['types for JSX and Vue', once(writeElementTypes)],
   ['single-file builds', buildBundles],
   ['licences', once(writeLicences)],
   ['site library', once(publishLibrary)],

@@ -83,6 +83,7 @@ describe('eslint.config', () => {
     [sdk, 'export const now = Date.now();', 'no-restricted-syntax'],
     [sdk, 'export const now = new Date();', 'no-restricted-syntax'],
     [sdk, 'export const luck = Math.random();', 'no-restricted-syntax'],
+    [sdk, 'export const where = process.cwd();', 'no-restricted-globals'],
     [sdk, 'export const loose = (value: any): unknown => value;', '@typescript-eslint/no-explicit-any'],
     [sdk, '// @ts-ignore\nexport const one = 1;', '@typescript-eslint/ban-ts-comment'],
     [sdk, "export const run = eval('1');", 'no-eval'],

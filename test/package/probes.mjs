@@ -48,6 +48,8 @@ console.log(JSON.stringify({
 export const typesProbe = `
 import { RillageError, runColumn, type Catchment, type Forcing } from '@rillage/sdk';
 import * as elements from '@rillage/elements';
+import type { RillageElements } from '@rillage/elements/jsx';
+import type { RillageComponents } from '@rillage/elements/vue';
 
 const catchment: Catchment = { initialStorage: 900, selection: { discharge: { form: 'uniform' } } };
 const forcing: Forcing = {
@@ -63,6 +65,10 @@ try {
 } catch (error) {
   if (error instanceof RillageError) console.log(error.code satisfies string);
 }
+export const compact: RillageElements['rillage-reading'] = { form: 'compact', id: 'now' };
+export const props: InstanceType<RillageComponents['rillage-station']>['$props'] = { src: 'station.json' };
+// @ts-expect-error a form that the element does not have
+export const large: RillageElements['rillage-reading'] = { form: 'large' };
 // @ts-expect-error an unknown form is refused by the types
 export const wrong: Catchment = { initialStorage: 1, selection: { discharge: { form: 'unknown' } } };
 `;

@@ -30,10 +30,11 @@ export async function installTarballs() {
 
 export const manifestOf = (project, name) => JSON.parse(readFileSync(join(project, 'node_modules/@rillage', name, 'package.json'), 'utf8'));
 
-/** Every address that a package's exports map offers: `@rillage/sdk`, `@rillage/sdk/worker`; a pattern as all the files it fits. */
+/** Every address that a package's exports map offers: `@rillage/sdk`, `@rillage/sdk/worker`; a pattern as all the files it fits; not those of types alone. */
 export function publicPaths(project) {
   return packageNames.flatMap((name) =>
     Object.entries(manifestOf(project, name).exports)
+      .filter(([, target]) => typeof target === 'string' || target.default)
       .flatMap(([path, target]) => (path.includes('*') ? expanded(project, name, path, target.default ?? target) : [path]))
       .map((path) => `@rillage/${name}${path.slice(1)}`),
   );
