@@ -1,5 +1,6 @@
 import { type Catchment, type ColumnRun, type OutflowAges, type ReadingSource, type WeightedRun } from '../contract.js';
 import { RillageError } from '../errors.js';
+import { instantMs, instantText } from './readingTime.js';
 
 /** A reading's source made regular: runs over the same steps, weights that add up to 1, and what they share. */
 export interface Members {
@@ -71,7 +72,7 @@ export function readMembers(source: ReadingSource, of?: string): Members {
     start: first.start,
     stepDays: first.stepDays,
     steps: first.steps,
-    recordStart: checkpoint.recordStart,
+    recordStart: instantText(instantMs(checkpoint.recordStart, 'recordStart')),
     recordSteps: checkpoint.steps,
     catchment: checkpoint.catchment,
   };
