@@ -1,0 +1,139 @@
+const FIRST_CAPACITY = 256;
+
+/**
+ * The storage as parcels, oldest at index 0, youngest last. Times are in steps since the record began (negative during spin-up),
+ * depths and entered amounts in mm. Below parcel 0 lies the pre-record water.
+ */
+export class ColumnState {
+  capacity = 0;
+  count = 0;
+  /** [capacity] mm of each parcel still stored. */
+  depth = new Float64Array(0);
+  /** [capacity] entry interval of each parcel. */
+  entryStart = new Float64Array(0);
+  entryEnd = new Float64Array(0);
+  /** [capacity] cumulative inflow of the record at both ends of the entry interval, mm. */
+  enteredBefore = new Float64Array(0);
+  enteredAfter = new Float64Array(0);
+  /** [outflows × capacity] Ω last seen at the older edge of each parcel: the predictor of the next midpoint. */
+  lastShare = new Float64Array(0);
+  /** [tracers × capacity] */
+  concentration = new Float64Array(0);
+  /** [capacity] index of the followed inflow, −1 otherwise. */
+  followed = new Int32Array(0);
+  /** [outflows × capacity] scratch of a step: mm taken from each parcel, and from it and all younger ones. */
+  taken = new Float64Array(0);
+  cumulative = new Float64Array(0);
+
+  /** mm of pre-record water. */
+  preRecord: number;
+  /** mm in storage altogether, by the fluxes. */
+  total: number;
+  /** Parcels 0 … assumed − 1 came with spin-up. */
+  assumed = 0;
+
+  constructor(
+    readonly outflows: number,
+    readonly tracers: number,
+    initialStorage: number,
+  ) {
+    this.preRecord = initialStorage;
+    this.total = initialStorage;
+    this.reserve(FIRST_CAPACITY);
+  }
+
+  reserve(capacity: number): void {
+    if (capacity <= this.capacity) return;
+    const size = Math.max(capacity, 2 * this.capacity);
+    this.depth = grown(this.depth, size);
+    this.entryStart = grown(this.entryStart, size);
+    this.entryEnd = grown(this.entryEnd, size);
+    this.enteredBefore = grown(this.enteredBefore, size);
+    this.enteredAfter = grown(this.enteredAfter, size);
+    this.lastShare = regrown(this.lastShare, this.outflows, this.capacity, size);
+    this.concentration = regrown(this.concentration, this.tracers, this.capacity, size);
+    this.taken = new Float64Array(this.outflows * size);
+    this.cumulative = new Float64Array(this.outflows * size);
+    const followed = new Int32Array(size).fill(-1);
+    followed.set(this.followed);
+    this.followed = followed;
+    this.capacity = size;
+  }
+
+  append(entryStart: number, entryEnd: number, enteredBefore: number, enteredAfter: number, followed: number): void {
+    if (this.count === this.capacity) this.reserve(this.count + 1);
+    const i = this.count++;
+    this.depth[i] = 0;
+    this.entryStart[i] = entryStart;
+    this.entryEnd[i] = entryEnd;
+    this.enteredBefore[i] = enteredBefore;
+    this.enteredAfter[i] = enteredAfter;
+    this.followed[i] = followed;
+    for (let f = 0; f < this.outflows; f++) this.lastShare[f * this.capacity + i] = 0;
+  }
+
+  /**
+   * Drops used-up parcels and merges neighbours whose joint entry interval is at most `resolution` × the age of its younger end.
+   * Depth, entered amounts and tracer mass add up exactly; the boundary between them is forgotten.
+   */
+  merge(now: number, resolution: number): void {
+    let kept = 0;
+    let assumed = 0;
+    for (let i = 0; i < this.count; i++) {
+      if (this.depth[i] <= 0 && this.followed[i] < 0) continue;
+      const last = kept - 1;
+      const isAssumed = i < this.assumed;
+      const joins =
+        resolution > 0 &&
+        last >= 0 &&
+        this.followed[i] < 0 &&
+        this.followed[last] < 0 &&
+        isAssumed === last < assumed &&
+        this.entryEnd[i] - this.entryStart[last] <= resolution * (now - this.entryEnd[i]);
+      if (joins) this.join(last, i);
+      else {
+        if (kept !== i) this.move(kept, i);
+        kept++;
+        if (isAssumed) assumed = kept;
+      }
+    }
+    this.count = kept;
+    this.assumed = assumed;
+  }
+
+  /** Adds parcel `younger` to parcel `older`, whose older edge stays. */
+  private join(older: number, younger: number): void {
+    const a = this.depth[older];
+    const b = this.depth[younger];
+    for (let t = 0; t < this.tracers; t++) {
+      const base = t * this.capacity;
+      this.concentration[base + older] = (a * this.concentration[base + older] + b * this.concentration[base + younger]) / (a + b);
+    }
+    this.depth[older] = a + b;
+    this.entryEnd[older] = this.entryEnd[younger];
+    this.enteredAfter[older] = this.enteredAfter[younger];
+  }
+
+  private move(to: number, from: number): void {
+    this.depth[to] = this.depth[from];
+    this.entryStart[to] = this.entryStart[from];
+    this.entryEnd[to] = this.entryEnd[from];
+    this.enteredBefore[to] = this.enteredBefore[from];
+    this.enteredAfter[to] = this.enteredAfter[from];
+    this.followed[to] = this.followed[from];
+    for (let f = 0; f < this.outflows; f++) this.lastShare[f * this.capacity + to] = this.lastShare[f * this.capacity + from];
+    for (let t = 0; t < this.tracers; t++) this.concentration[t * this.capacity + to] = this.concentration[t * this.capacity + from];
+  }
+}
+
+function grown(old: Float64Array<ArrayBuffer>, size: number): Float64Array<ArrayBuffer> {
+  const larger = new Float64Array(size);
+  larger.set(old);
+  return larger;
+}
+
+function regrown(old: Float64Array<ArrayBuffer>, rows: number, width: number, size: number): Float64Array<ArrayBuffer> {
+  const larger = new Float64Array(rows * size);
+  for (let row = 0; row < rows; row++) larger.set(old.subarray(row * width, (row + 1) * width), row * size);
+  return larger;
+}

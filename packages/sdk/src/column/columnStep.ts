@@ -1,0 +1,176 @@
+import type { SelectionEvaluator } from '../selection/index.js';
+import type { ColumnState } from './columnState.js';
+import { StepIntegrator } from './integrator.js';
+import { MidpointPass } from './midpoint.js';
+
+/** Error allowed in the share of the step's outflow taken above any one boundary. */
+export const EXACT_TOLERANCE = 1e-9;
+export const DEFAULT_TOLERANCE = 2e-5;
+const MIDPOINT_TOLERANCE = 4e-5;
+
+/**
+ * One step of the whole column: the increasing map of every boundary and what each outflow took above it. Parcels that enter in the
+ * step must have been appended (with depth 0) before.
+ */
+export class ColumnStep {
+  /** [outflows] mm taken from pre-record water in the step. */
+  readonly preTaken: Float64Array;
+  private readonly integrator: StepIntegrator;
+  private readonly midpoint: MidpointPass | null;
+  private readonly tolerance: number;
+  private readonly above: Float64Array;
+  private readonly loss: Float64Array;
+  private lastInflow = 0;
+
+  constructor(
+    evaluator: SelectionEvaluator,
+    everyAge: boolean,
+  ) {
+    const count = evaluator.names.length;
+    this.integrator = new StepIntegrator(evaluator);
+    this.midpoint = everyAge ? null : MidpointPass.for(evaluator);
+    this.tolerance = everyAge ? EXACT_TOLERANCE : DEFAULT_TOLERANCE;
+    this.preTaken = new Float64Array(count);
+    this.above = new Float64Array(count);
+    this.loss = new Float64Array(count);
+  }
+
+  /** The inflow of the step before: part of the state, since the choice of method looks at it. */
+  get previousInflow(): number {
+    return this.lastInflow;
+  }
+  set previousInflow(value: number) {
+    this.lastInflow = value;
+  }
+
+  /**
+   * @param state    column at the start of the step; moved to its end
+   * @param firstNew index of the first parcel that enters in the step, `state.count` if none
+   * @param inflow   mm/day
+   * @param flux     [outflows] mm/day
+   */
+  advance(state: ColumnState, firstNew: number, inflow: number, flux: Float64Array, days: number): void {
+    const { above, midpoint } = this;
+    const outflows = state.outflows;
+    const totalBefore = state.total;
+    let out = 0;
+    for (let f = 0; f < outflows; f++) out += flux[f];
+    const totalAfter = totalBefore + (inflow - out) * days;
+    above.fill(0);
+    if (out <= 0) this.fill(state, firstNew, inflow * days);
+    else {
+      this.integrator.setStep(days, inflow, flux, totalBefore, this.tolerance);
+      let edge = 0;
+      const parts = state.count - firstNew;
+      for (let i = state.count - 1; i >= firstNew; i--) {
+        this.integrator.carry(0, (i - firstNew) / parts);
+        this.settle(state, i, (inflow * days) / parts, flux, days);
+      }
+      let i = firstNew - 1;
+      for (; i >= 0; i--) {
+        const start = edge + state.depth[i];
+        if (midpoint !== null && this.midpointServes(state, i, start, inflow, flux, days)) break;
+        edge = start;
+        this.integrator.carry(start, 0);
+        this.settle(state, i, 0, flux, days);
+      }
+      if (i >= 0) {
+        const middle = totalBefore + 0.5 * (inflow - out) * days;
+        midpoint!.run(state, i, edge, above[0], outflows > 1 ? above[1] : 0, inflow, flux, days, middle);
+        for (let f = 0; f < outflows; f++) above[f] = state.cumulative[f * state.capacity];
+      }
+    }
+    state.total = totalAfter;
+    let gone = this.fromPreRecord(state, flux, days);
+    if (gone > state.preRecord) {
+      this.holdAboveBottom(state, flux, days);
+      gone = this.fromPreRecord(state, flux, days);
+    }
+    state.preRecord = Math.max(0, state.preRecord - gone);
+    this.lastInflow = inflow;
+  }
+
+  /** mm that the outflows take from below the last parcel, all together. */
+  private fromPreRecord(state: ColumnState, flux: Float64Array, days: number): number {
+    let gone = 0;
+    for (let f = 0; f < state.outflows; f++) {
+      const last = state.count > 0 ? state.cumulative[f * state.capacity] : 0;
+      this.preTaken[f] = Math.max(0, flux[f] * days - last);
+      gone += this.preTaken[f];
+    }
+    return gone;
+  }
+
+  private midpointServes(state: ColumnState, i: number, start: number, inflow: number, flux: Float64Array, days: number): boolean {
+    let drain = 0;
+    for (let f = 0; f < state.outflows; f++) drain += flux[f] * state.lastShare[f * state.capacity + i];
+    const rate = Math.max(Math.abs(inflow - drain), Math.abs(this.lastInflow - drain));
+    return start > 2 * rate * days && this.midpoint!.allows(start, rate, flux, days, MIDPOINT_TOLERANCE);
+  }
+
+  /** Without outflow every parcel keeps its depth and new ones take what falls. */
+  private fill(state: ColumnState, firstNew: number, fallen: number): void {
+    const parts = state.count - firstNew;
+    for (let f = 0; f < state.outflows; f++) {
+      state.taken.fill(0, f * state.capacity, f * state.capacity + state.count);
+      state.cumulative.fill(0, f * state.capacity, f * state.capacity + state.count);
+    }
+    for (let i = firstNew; i < state.count; i++) state.depth[i] = fallen / parts;
+  }
+
+  /** Books what the integrator found for the boundary below parcel i; never more than there is, never less than nothing. */
+  private settle(state: ColumnState, i: number, fallen: number, flux: Float64Array, days: number): void {
+    const { above, loss } = this;
+    const { taken, share } = this.integrator;
+    const { capacity } = state;
+    let all = 0;
+    for (let f = 0; f < above.length; f++) {
+      loss[f] = Math.max(0, Math.min(taken[f], flux[f] * days) - above[f]);
+      all += loss[f];
+    }
+    const there = state.depth[i] + fallen;
+    const keep = all > there ? there / all : 1;
+    for (let f = 0; f < above.length; f++) {
+      loss[f] *= keep;
+      above[f] += loss[f];
+      state.taken[f * capacity + i] = loss[f];
+      state.cumulative[f * capacity + i] = above[f];
+      state.lastShare[f * capacity + i] = share[f];
+    }
+    state.depth[i] = all > there ? 0 : Math.max(0, there - all);
+  }
+
+  /**
+   * No boundary lies below total storage: once the pre-record water is used up, what a selection would take from below comes from the
+   * oldest water there is. The excess depth goes to the outflows in proportion to what they still lack.
+   */
+  private holdAboveBottom(state: ColumnState, flux: Float64Array, days: number): void {
+    const { capacity, count, outflows, cumulative, taken, depth } = state;
+    const bottom = state.total;
+    let edge = 0;
+    let i = count - 1;
+    for (; i >= 0; i--) {
+      if (edge + depth[i] > bottom) break;
+      edge += depth[i];
+    }
+    for (; i >= 0; i--) {
+      const newer = i + 1;
+      let lacking = 0;
+      for (let f = 0; f < outflows; f++) {
+        const aboveHere = newer < count ? cumulative[f * capacity + newer] : 0;
+        this.loss[f] = Math.max(0, flux[f] * days - aboveHere - taken[f * capacity + i]);
+        lacking += this.loss[f];
+      }
+      const allowed = Math.max(0, bottom - edge);
+      const excess = Math.min(depth[i] - allowed, lacking);
+      if (excess > 0) {
+        for (let f = 0; f < outflows; f++) taken[f * capacity + i] += (excess * this.loss[f]) / lacking;
+        depth[i] -= excess;
+      }
+      for (let f = 0; f < outflows; f++) {
+        cumulative[f * capacity + i] = (newer < count ? cumulative[f * capacity + newer] : 0) + taken[f * capacity + i];
+      }
+      edge += depth[i];
+    }
+  }
+}

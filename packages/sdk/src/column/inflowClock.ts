@@ -1,0 +1,67 @@
+const FINER_THAN_PARCELS = 8;
+
+/**
+ * Cumulative inflow against time, thinned with age eight times more finely than the parcels: it says how the rain was spread within
+ * a merged parcel's entry interval, so that an age can be placed inside it. Its length depends on the age range, not on the steps.
+ */
+export class InflowClock {
+  /** Steps since the record began, increasing. */
+  times: number[] = [];
+  /** mm entered by then, not decreasing. */
+  amounts: number[] = [];
+
+  add(start: number, end: number, before: number, after: number): void {
+    if (this.times.length === 0 || this.times[this.times.length - 1] < start) this.push(start, before);
+    this.push(end, after);
+  }
+
+  /** mm that had entered by `time`; linear between what is kept. */
+  amountAt(time: number): number {
+    const { times, amounts } = this;
+    const k = lastAtOrBelow(times, time);
+    if (k < 0) return amounts.length > 0 ? amounts[0] : 0;
+    if (k === times.length - 1) return amounts[k];
+    return amounts[k] + ((time - times[k]) / (times[k + 1] - times[k])) * (amounts[k + 1] - amounts[k]);
+  }
+
+  /** The time by which `amount` mm had entered. */
+  timeAt(amount: number): number {
+    const { times, amounts } = this;
+    const k = lastAtOrBelow(amounts, amount);
+    if (k < 0) return times[0];
+    if (k === times.length - 1) return times[k];
+    const rise = amounts[k + 1] - amounts[k];
+    return times[k] + ((amount - amounts[k]) / rise) * (times[k + 1] - times[k]);
+  }
+
+  thin(now: number, resolution: number): void {
+    const { times, amounts } = this;
+    let kept = 0;
+    for (let k = 0; k < times.length; k++) {
+      const inner = kept > 0 && k + 1 < times.length;
+      if (inner && times[k + 1] - times[kept - 1] <= (resolution / FINER_THAN_PARCELS) * (now - times[k + 1])) continue;
+      times[kept] = times[k];
+      amounts[kept] = amounts[k];
+      kept++;
+    }
+    times.length = kept;
+    amounts.length = kept;
+  }
+
+  private push(time: number, amount: number): void {
+    this.times.push(time);
+    this.amounts.push(amount);
+  }
+}
+
+/** Index of the last entry ≤ value in a list that does not decrease; −1 if all are above. */
+function lastAtOrBelow(list: readonly number[], value: number): number {
+  let low = -1;
+  let high = list.length;
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if (list[middle] <= value) low = middle;
+    else high = middle;
+  }
+  return low;
+}

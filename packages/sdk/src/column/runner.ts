@@ -1,0 +1,222 @@
+import type { Catchment, Checkpoint, ColumnRun, Forcing, RunOptions } from '../contract.js';
+import { middleOfStep, seasonFraction, SelectionEvaluator } from '../selection/index.js';
+import { planTracer, type TracerPlan } from '../tracers/parcelTracer.js';
+import { ColumnState } from './columnState.js';
+import { ColumnStep } from './columnStep.js';
+import { InflowClock } from './inflowClock.js';
+import { Recorder } from './recorder.js';
+import { moveTracer, TracerLedger } from './tracerPass.js';
+import { parseInstant } from './validate.js';
+
+export const DEFAULT_AGE_RESOLUTION = 0.05;
+/** Steps between passes that merge parcels and thin the clock; counted from the record's start, so that it never depends on who runs it. */
+const MERGE_EVERY = 8;
+/** A parcel that lost solute unevenly is no longer well mixed, so storm days are cut by the share of an outflow that they would feed. */
+const PARTS_PER_SHARE = { default: 10, everyAge: 40 };
+const MOST_PARTS = { default: 8, everyAge: 32 };
+
+/** A run in progress: `advance` any number of steps at a time, then `finish`. The same bits however it is cut. */
+export class ColumnRunner {
+  readonly state: ColumnState;
+  readonly clock: InflowClock | null;
+  readonly ledgers: TracerLedger[];
+  readonly step: ColumnStep;
+  readonly evaluator: SelectionEvaluator;
+  readonly names: readonly string[];
+  readonly plans: readonly TracerPlan[];
+  /** Steps of the record before this forcing. */
+  before = 0;
+  entered = 0;
+  /** mm in and out since the record (or its spin-up) began, with the storage it began with. */
+  balance: { initial: number; in: number; out: number };
+  wetness: readonly [number, number];
+  most = 0;
+  private done = 0;
+  private readonly recorder: Recorder;
+  private readonly flux: Float64Array;
+  private readonly mass: Float64Array;
+  private readonly inputs: Float64Array[];
+  private readonly fluxes: Float64Array[];
+  private readonly reacts: boolean;
+  private readonly startMilliseconds: number;
+  private middleStorage = 0;
+  private at = 0;
+
+  constructor(
+    readonly catchment: Catchment,
+    readonly forcing: Forcing,
+    readonly options: RunOptions,
+    readonly ageResolution: number,
+    readonly recordStart: string,
+    initialStorage: number,
+  ) {
+    this.names = Object.keys(catchment.selection);
+    const tracers = Object.entries(catchment.tracers ?? {});
+    this.plans = tracers.map(([name, rule]) => planTracer(name, rule, this.names));
+    this.evaluator = new SelectionEvaluator(this.names, catchment.selection);
+    this.state = new ColumnState(this.names.length, tracers.length, initialStorage);
+    this.step = new ColumnStep(this.evaluator, ageResolution === 0);
+    this.clock = ageResolution > 0 ? new InflowClock() : null;
+    this.ledgers = this.plans.map(() => new TracerLedger());
+    this.recorder = new Recorder(this.names, tracers.map(([name]) => name), forcing.inflow.length, forcing.stepDays, options);
+    this.flux = new Float64Array(this.names.length);
+    this.mass = new Float64Array(this.names.length);
+    this.inputs = this.plans.map((plan) => forcing.inflowConcentration[plan.name]);
+    this.fluxes = this.names.map((name) => forcing.outflows[name]);
+    this.reacts = this.plans.some((plan) => !plan.conservative);
+    this.startMilliseconds = parseInstant(forcing.start);
+    this.balance = { initial: initialStorage, in: 0, out: 0 };
+    this.wetness = [0, 1];
+  }
+
+  get stepsLeft(): number {
+    return this.forcing.inflow.length - this.done;
+  }
+
+  /** Runs the record once without recording, its last step ending at step 0: water that it adds is assumed. */
+  spinUp(repeats: number): void {
+    const steps = this.forcing.inflow.length;
+    for (let repeat = repeats; repeat > 0; repeat--) {
+      for (let k = 0; k < steps; k++) this.advanceOne(k, -repeat * steps + k, -1);
+    }
+    this.state.merge(0, 0);
+    this.state.assumed = this.state.count;
+  }
+
+  advance(steps: number): void {
+    const end = Math.min(this.done + steps, this.forcing.inflow.length);
+    for (let k = this.done; k < end; k++) {
+      const time = this.before + k;
+      const follow = this.recorder.followIndex(k);
+      if (follow >= 0) this.recorder.startFollowing(k, this.forcing.inflow[k] * this.forcing.stepDays);
+      this.advanceOne(k, time, follow);
+      this.recorder.record(k, time + 1, this.state, this.clock, this.flux, this.step.preTaken);
+      for (let t = 0; t < this.plans.length; t++) {
+        this.moveTracer(t, k);
+        this.recorder.recordConcentration(k, t, this.mass, this.flux);
+      }
+      if (this.recorder.follows.length > 0) this.recorder.recordFollowed(k, this.state);
+      this.recorder.recordSnapshot(k, time + 1, this.state, this.evaluator);
+      this.tidy(time + 1);
+    }
+    this.done = end;
+  }
+
+  finish(checkpoint: () => Checkpoint): ColumnRun {
+    return {
+      start: this.forcing.start,
+      stepDays: this.forcing.stepDays,
+      ...this.recorder.result(),
+      closure: this.closure(),
+      parcels: { atEnd: this.state.count, most: this.most },
+      checkpoint,
+    };
+  }
+
+  private firstNew = 0;
+  private newDepth = 0;
+
+  /** Water of one step; during spin-up tracers too. */
+  private advanceOne(k: number, time: number, follow: number): void {
+    const { state, forcing, flux, evaluator } = this;
+    const days = forcing.stepDays;
+    const inflow = forcing.inflow[k];
+    let out = 0;
+    for (let f = 0; f < flux.length; f++) {
+      flux[f] = this.fluxes[f][k];
+      out += flux[f];
+    }
+    this.at = k;
+    this.middleStorage = state.total + 0.5 * (inflow - out) * days;
+    if (!evaluator.steady) evaluator.setStep(k, this.driver);
+    this.firstNew = state.count;
+    if (inflow > 0) {
+      const parts = this.reacts ? this.partsFor(inflow * days) : 1;
+      const before = this.entered;
+      const after = before + inflow * days;
+      for (let part = 0; part < parts; part++) {
+        const low = part === 0 ? before : before + ((after - before) * part) / parts;
+        const high = part === parts - 1 ? after : before + ((after - before) * (part + 1)) / parts;
+        state.append(time + part / parts, time + (part + 1) / parts, low, high, follow);
+      }
+      this.newDepth = (inflow * days) / parts;
+      this.entered = after;
+      this.clock?.add(time, time + 1, before, after);
+    }
+    if (state.count > this.most) this.most = state.count;
+    this.step.advance(state, this.firstNew, inflow, flux, days);
+    this.balance.in += inflow * days;
+    this.balance.out += out * days;
+    if (time < 0) {
+      for (let t = 0; t < this.plans.length; t++) this.moveTracer(t, k);
+      this.tidy(time + 1);
+    }
+  }
+
+  private moveTracer(t: number, k: number): void {
+    moveTracer(
+      this.state,
+      this.plans[t],
+      t,
+      this.ledgers[t],
+      this.firstNew,
+      this.newDepth,
+      this.inputs[t][k],
+      this.forcing.stepDays,
+      this.step.preTaken,
+      this.mass,
+    );
+  }
+
+  private tidy(now: number): void {
+    if (now % MERGE_EVERY !== 0) return;
+    this.state.merge(now, this.ageResolution);
+    this.clock?.thin(now, this.ageResolution);
+  }
+
+  private partsFor(depth: number): number {
+    const mode = this.ageResolution === 0 ? 'everyAge' : 'default';
+    this.evaluator.evaluate(depth, this.state.total, this.mass);
+    let share = 0;
+    for (let f = 0; f < this.mass.length; f++) if (this.mass[f] > share) share = this.mass[f];
+    return Math.max(1, Math.min(MOST_PARTS[mode], Math.ceil(PARTS_PER_SHARE[mode] * share)));
+  }
+
+  private readonly driver = (name: string): number => {
+    switch (name) {
+      case 'storage':
+        return this.middleStorage;
+      case 'storageAnomaly':
+        return this.middleStorage - this.catchment.initialStorage;
+      case 'wetness':
+        return (this.middleStorage - this.wetness[0]) / (this.wetness[1] - this.wetness[0]);
+      case 'season':
+        return seasonFraction(middleOfStep(this.startMilliseconds, this.forcing.stepDays, this.at));
+      case 'discharge':
+        return this.forcing.outflows['discharge'][this.at];
+      default:
+        return this.forcing.drivers![name][this.at];
+    }
+  };
+
+  private closure(): ColumnRun['closure'] {
+    const { state, balance } = this;
+    let stored = state.preRecord;
+    for (let i = 0; i < state.count; i++) stored += state.depth[i];
+    const throughput = Math.max(balance.in, balance.out, Number.MIN_VALUE);
+    const tracers: Record<string, number> = Object.create(null) as Record<string, number>;
+    this.plans.forEach((plan, t) => {
+      const ledger = this.ledgers[t];
+      let mass = state.preRecord * plan.preRecord;
+      let size = Math.abs(mass);
+      for (let i = 0; i < state.count; i++) {
+        const part = state.depth[i] * state.concentration[t * state.capacity + i];
+        mass += part;
+        size += Math.abs(part);
+      }
+      const missing = balance.initial * plan.preRecord + ledger.entered + ledger.held - ledger.left - ledger.reacted - mass;
+      tracers[plan.name] = Math.abs(missing) / Math.max(Math.abs(ledger.entered), Math.abs(ledger.left), size, Number.MIN_VALUE);
+    });
+    return { water: Math.abs(balance.initial + balance.in - balance.out - stored) / throughput, tracers };
+  }
+}

@@ -1,0 +1,125 @@
+import { enrichment, growingProfile, meanOfDecay, type TracerPlan } from '../tracers/parcelTracer.js';
+import type { ColumnState } from './columnState.js';
+
+/** What a tracer's mass did so far, in concentration × mm. */
+export class TracerLedger {
+  entered = 0;
+  left = 0;
+  /** Lost by decay, or gained (negative) towards an equilibrium. */
+  reacted = 0;
+  /** Gained (or lost, negative) by holding the pre-record water at its stated concentration while an outflow leaves solute behind. */
+  held = 0;
+}
+
+const profile = new Float64Array(2);
+
+/**
+ * Moves one tracer through a step whose water is already moved (`state.taken`, `state.depth`).
+ * @param index      which tracer of the state
+ * @param firstNew   index of the first parcel that entered in this step
+ * @param newDepth   mm of inflow to each such parcel
+ * @param inflow     concentration of the inflow (ignored without new parcels)
+ * @param days       length of the step
+ * @param preTaken   [outflows] mm taken from pre-record water
+ * @param out        [outflows] receives the mass that left with each outflow
+ */
+export function moveTracer(
+  state: ColumnState,
+  plan: TracerPlan,
+  index: number,
+  ledger: TracerLedger,
+  firstNew: number,
+  newDepth: number,
+  inflow: number,
+  days: number,
+  preTaken: Float64Array,
+  out: Float64Array,
+): void {
+  const { taken, capacity, count, outflows } = state;
+  const concentration = state.concentration.subarray(index * capacity, index * capacity + count);
+  for (let i = firstNew; i < count; i++) concentration[i] = inflow;
+  ledger.entered += (count - firstNew) * newDepth * (count > firstNew ? inflow : 0);
+  for (let f = 0; f < outflows; f++) out[f] = preTaken[f] * plan.carried[f] * plan.preRecord;
+  if (plan.conservative) {
+    for (let f = 0; f < outflows; f++) {
+      const base = f * capacity;
+      let sum = 0;
+      for (let i = 0; i < count; i++) sum += taken[base + i] * concentration[i];
+      out[f] += sum;
+    }
+  } else {
+    for (let f = 0; f < outflows; f++) ledger.held -= (1 - plan.carried[f]) * preTaken[f] * plan.preRecord;
+    react(state, plan, ledger, concentration, firstNew, newDepth, days, out);
+  }
+  for (let f = 0; f < outflows; f++) ledger.left += out[f];
+}
+
+/** Cut of the entry step into parts, as parcels `firstNew` … `count − 1`; each is moved as if it had entered in the middle of its part. */
+function react(
+  state: ColumnState,
+  plan: TracerPlan,
+  ledger: TracerLedger,
+  concentration: Float64Array,
+  firstNew: number,
+  newDepth: number,
+  days: number,
+  out: Float64Array,
+): void {
+  const { taken, depth, capacity, count, outflows } = state;
+  const { carried, rate, target } = plan;
+  const parts = count - firstNew;
+  const fullDecay = Math.exp(-rate * days);
+  const fullMeanDecay = meanOfDecay(rate * days);
+  for (let i = 0; i < count; i++) {
+    let water = 0;
+    let withSolute = 0;
+    for (let f = 0; f < outflows; f++) {
+      const mm = taken[f * capacity + i];
+      water += mm;
+      withSolute += carried[f] * mm;
+    }
+    const entering = i >= firstNew ? newDepth : 0;
+    const after = depth[i];
+    const before = after + water;
+    const old = concentration[i];
+    let end: number;
+    let mean: number;
+    if (after <= 0) {
+      // used up: whatever solute there was leaves with what carries any
+      end = old;
+      mean = withSolute > 0 ? (before * old) / withSolute : old;
+    } else if (entering > 0 && parts === 1) {
+      const retained = after + withSolute; // J − Σ(1 − a) q, as depths
+      const start = (before * old) / retained;
+      growingProfile(retained / after, rate * days, profile);
+      end = target + (start - target) * profile[0];
+      mean = target + (start - target) * profile[1];
+    } else {
+      const waited = entering > 0 ? (1 - (i - firstNew + 0.5) / parts) * days : days;
+      const decay = entering > 0 ? Math.exp(-rate * waited) : fullDecay;
+      const meanDecay = entering > 0 ? meanOfDecay(rate * waited) : fullMeanDecay;
+      const enriched = old * enrichment(before, after, water > 0 ? 1 - withSolute / water : 0);
+      const mixed = withSolute > 0 ? (before * old - after * enriched) / withSolute : old;
+      end = rate === 0 ? enriched : target + (enriched - target) * decay;
+      mean = rate === 0 ? mixed : target + (mixed - target) * meanDecay;
+    }
+    concentration[i] = end;
+    let left = 0;
+    for (let f = 0; f < outflows; f++) {
+      const mass = carried[f] * taken[f * capacity + i] * mean;
+      out[f] += mass;
+      left += mass;
+    }
+    const rest = before * old - left - end * after;
+    if (after <= 0 && withSolute <= 0) leaveBehind(state, ledger, concentration, i, rest);
+    else ledger.reacted += rest;
+  }
+}
+
+/** The solute of a parcel whose water went without it stays with the next older water. */
+function leaveBehind(state: ColumnState, ledger: TracerLedger, concentration: Float64Array, i: number, mass: number): void {
+  let older = i - 1;
+  while (older >= 0 && state.depth[older] <= 0) older--;
+  if (older >= 0) concentration[older] += mass / state.depth[older];
+  else ledger.held -= mass;
+}
