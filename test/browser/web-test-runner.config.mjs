@@ -6,7 +6,7 @@ import { esbuildPlugin } from '@web/dev-server-esbuild';
 import { defaultReporter } from '@web/test-runner';
 import { a11ySnapshotPlugin } from '@web/test-runner-commands/plugins';
 import { at } from '../../demo-site/tools/paths.mjs';
-import { emulateCommand, screenshotCommand } from './config/commands.mjs';
+import { emulateCommand, screenshotCommand, viewportCommand } from './config/commands.mjs';
 import { countsReporter } from './config/counts.mjs';
 import { enginesWanted } from './config/find.mjs';
 import { launchers, webkitHost } from './config/launchers.mjs';
@@ -30,6 +30,7 @@ export default {
     esbuildPlugin({ ts: true, target: 'es2022' }),
     a11ySnapshotPlugin(),
     emulateCommand(),
+    viewportCommand(),
     screenshotCommand(),
     ...(engines.includes('webkit') ? [webkitHost()] : []),
   ],
