@@ -1,0 +1,57 @@
+import { logGamma } from '../../numeric/logGamma.js';
+import { logSumExp } from '../leaveOneOut.js';
+
+/** A mixture of multivariate Student-t distributions, as plain data: a picture of the posterior to draw proposals from. */
+export interface Guide {
+  parts: GuidePart[];
+}
+
+export interface GuidePart {
+  /** Shares of all parts add up to 1. */
+  weight: number;
+  degrees: number;
+  mean: number[];
+  /** Lower triangle L of scale = L Lᵀ, by rows. */
+  root: number[][];
+}
+
+/** One draw. @param random a seeded generator */
+export function drawGuide(guide: Guide, random: { uniform(): number; normal(): number }): number[] {
+  let rest = random.uniform();
+  const part = guide.parts.find(({ weight }) => (rest -= weight) < 0) ?? guide.parts[guide.parts.length - 1];
+  const normals = part.mean.map(() => random.normal());
+  let chiSquare = 0;
+  for (let k = 0; k < part.degrees; k++) chiSquare += random.normal() ** 2;
+  const stretch = Math.sqrt(part.degrees / chiSquare);
+  return part.mean.map((centre, j) => {
+    let sum = 0;
+    for (let k = 0; k <= j; k++) sum += part.root[j][k] * normals[k];
+    return centre + stretch * sum;
+  });
+}
+
+/** log density, up to a constant that is the same for all points of all guides with the same degrees. */
+export function guideLogDensity(guide: Guide, point: readonly number[]): number {
+  return logSumExp(guide.parts.map((part) => Math.log(part.weight) + partLogDensity(part, point)));
+}
+
+/** log density of one part without its weight. */
+export function partLogDensity({ mean, root, degrees }: GuidePart, point: readonly number[]): number {
+  const dimensions = mean.length;
+  let logDeterminant = 0;
+  let distance = 0;
+  const solved = new Array<number>(dimensions);
+  for (let j = 0; j < dimensions; j++) {
+    let rest = point[j] - mean[j];
+    for (let k = 0; k < j; k++) rest -= root[j][k] * solved[k];
+    solved[j] = rest / root[j][j];
+    distance += solved[j] * solved[j];
+    logDeterminant += Math.log(root[j][j]);
+  }
+  return tailConstant(degrees, dimensions) - logDeterminant - ((degrees + dimensions) / 2) * Math.log1p(distance / degrees);
+}
+
+/** log of Γ((ν + d)/2) / (Γ(ν/2) ν^(d/2)); π^(d/2) is left out. */
+function tailConstant(degrees: number, dimensions: number): number {
+  return logGamma((degrees + dimensions) / 2) - logGamma(degrees / 2) - (dimensions / 2) * Math.log(degrees);
+}
