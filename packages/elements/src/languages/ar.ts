@@ -53,6 +53,7 @@ export const messages: Messages = {
   'reading.recordTooShort': 'السجل أقصر من أن يقول شيئًا.',
   'reading.storageRunsDown': 'الميزان المائي في السجل لا يستقيم: يخرج أكثر مما يمكن أن يكون موجودًا.',
   'reading.preRecordDominates': 'كل المياه تقريبًا كانت موجودة قبل بدء السجل.',
+  'reading.samplesTooOld': 'آخر قارورة حُلِّلت أقدم من أن يحمل السجل قولًا.',
   'reading.fitNotConverged': 'لم تستقر العينات على جواب.',
   'reading.notAssessed': 'المعروف أقل من أن يُعلَن.',
   'reading.invented': 'محطة مختلَقة للعرض: لا وجود لمكان كهذا.',
@@ -70,12 +71,10 @@ export const messages: Messages = {
   'reading.dateEnd': 'البيانات حتى نهاية {date}',
   'reading.old': 'بيانات قديمة',
   'reading.kept': 'نسخة محفوظة',
-  'reading.trendYounger':
-    'أحدث من المعتاد في هذا الموسم: {share} هطلت مطرًا خلال آخر {age}، مقابل {usual} في الأسابيع نفسها من السنوات السابقة، وعددها {years}.',
-  'reading.trendOlder':
-    'أقدم من المعتاد في هذا الموسم: {share} هطلت مطرًا خلال آخر {age}، مقابل {usual} في الأسابيع نفسها من السنوات السابقة، وعددها {years}.',
-  'reading.trendUsual':
-    'معتاد في هذا الموسم: {share} هطلت مطرًا خلال آخر {age}، مقابل {usual} في الأسابيع نفسها من السنوات السابقة، وعددها {years}.',
+  'reading.trend': '{how}: {share} هطلت مطرًا خلال آخر {age}، مقابل {usual} في الأسابيع نفسها من السنوات السابقة، وعددها {years}.',
+  'reading.younger': 'أحدث من المعتاد في هذا الموسم',
+  'reading.older': 'أقدم من المعتاد في هذا الموسم',
+  'reading.usual': 'معتاد في هذا الموسم',
   'reading.confidence': 'مدى التأكد',
   'reading.firm': 'مؤكَّد: العينات متفقة وتدعم الجواب.',
   'reading.tentative': 'مبدئي: خذ المدى لا الوسط.',

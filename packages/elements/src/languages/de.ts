@@ -47,13 +47,14 @@ export const messages: Messages = {
   'reading.recordTooShort': 'Die Aufzeichnung ist zu kurz, um etwas zu sagen.',
   'reading.storageRunsDown': 'Die Wasserbilanz der Aufzeichnung geht nicht auf: Es fließt mehr ab, als da gewesen sein kann.',
   'reading.preRecordDominates': 'Fast alles Wasser war schon da, als die Aufzeichnung begann.',
+  'reading.samplesTooOld': 'Die letzte untersuchte Flasche ist zu alt, als dass die Aufzeichnung eine Aussage tragen könnte.',
   'reading.fitNotConverged': 'Die Proben haben sich auf keine Antwort geeinigt.',
   'reading.notAssessed': 'Es ist zu wenig bekannt, um es anzugeben.',
   'reading.invented': 'Eine erfundene Messstelle zur Vorführung: Diesen Ort gibt es nicht.',
   'reading.caution':
     'Eine Schätzung zur Information und Planung, keine Grundlage für Entscheidungen über Trinkwasser, Baden oder Notfälle. Zuständige Behörde, örtliche Regeln und zugelassene Fachleute gehen vor.',
   'reading.table': 'Die Zahlen hinter dem Satz',
-  'reading.within': 'Als Regen gefallen innerhalb: {age}',
+  'reading.within': 'Innerhalb der letzten {age} als Regen gefallen',
   'reading.medianRow': 'Die Hälfte ist älter als',
   'reading.olderRow': 'Älter als die Aufzeichnung, Alter nicht bekannt',
   'reading.what': 'Vom Wasser',
@@ -64,12 +65,11 @@ export const messages: Messages = {
   'reading.dateEnd': 'Daten bis Ende des {date}',
   'reading.old': 'Alte Daten',
   'reading.kept': 'Aufbewahrte Kopie',
-  'reading.trendYounger':
-    'Jünger als für die Jahreszeit üblich: {share} fielen als Regen innerhalb von {age}, gegenüber {usual} in denselben Wochen von {years} früheren Jahren.',
-  'reading.trendOlder':
-    'Älter als für die Jahreszeit üblich: {share} fielen als Regen innerhalb von {age}, gegenüber {usual} in denselben Wochen von {years} früheren Jahren.',
-  'reading.trendUsual':
-    'Für die Jahreszeit üblich: {share} fielen als Regen innerhalb von {age}, gegenüber {usual} in denselben Wochen von {years} früheren Jahren.',
+  'reading.trend':
+    '{how}: {share} fielen innerhalb der letzten {age} als Regen, gegenüber {usual} in denselben Wochen von {years} früheren Jahren.',
+  'reading.younger': 'Jünger als für die Jahreszeit üblich',
+  'reading.older': 'Älter als für die Jahreszeit üblich',
+  'reading.usual': 'Für die Jahreszeit üblich',
   'reading.confidence': 'Wie sicher',
   'reading.firm': 'Sicher: Die Proben stimmen überein und stützen die Antwort.',
   'reading.tentative': 'Vorläufig: Es gilt der Bereich, nicht die Mitte.',

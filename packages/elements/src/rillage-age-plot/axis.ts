@@ -35,7 +35,7 @@ export function frameFor(width: number, em: number, recordDays: number, log: boo
   const span = log ? Math.log(recordDays / youngest) : recordDays;
   const share = (age: number): number => (log ? Math.log(Math.max(age, youngest) / youngest) : age) / span;
   return {
-    ...{ width, em, left, top, right, bottom, edge, youngest, recordDays, log, height: bottom + 4.2 * em },
+    ...{ width, em, left, top, right, bottom, edge, youngest, recordDays, log, height: bottom + (2 + 1.1 * rowsFor(width, em)) * em },
     x: (age) => left + Math.max(0, Math.min(1, share(age))) * (edge - left),
     ageAt: (x) => {
       const along = Math.max(0, Math.min(1, (x - left) / (edge - left)));
@@ -57,7 +57,7 @@ export interface AgeMark {
   label: string;
 }
 
-/** Axes: shares at the left, human ages below (in two rows where they would touch), the ramp between, the hatched ground at the right. */
+/** Axes: shares at the left, human ages below (in rows where they would touch), the ramp between, the hatched ground at the right. */
 export function axes(frame: Frame, marks: AgeMark[], shareLabels: { at: number; label: string }[]): TemplateResult {
   const { left, right, edge, top, bottom, em, x, y } = frame;
   const rampTop = bottom + 0.35 * em;
@@ -72,8 +72,8 @@ export function axes(frame: Frame, marks: AgeMark[], shareLabels: { at: number; 
     )}
     ${inRows(marks, frame).map(
       ({ days, label, row }) => svg`<line class="hair" x1=${x(days)} x2=${x(days)} y1=${top} y2=${bottom} />
-        <line class="tick" x1=${x(days)} x2=${x(days)} y1=${rampTop} y2=${rampTop + (row ? 1.9 : 0.8) * em} />
-        <text class="middle" x=${x(days)} y=${rampTop + (row ? 2.9 : 1.8) * em}>${label}</text>`,
+        <line class="tick" x1=${x(days)} x2=${x(days)} y1=${rampTop} y2=${rampTop + (0.8 + 1.1 * row) * em} />
+        <text class="middle" x=${x(days)} y=${rampTop + (1.8 + 1.1 * row) * em}>${label}</text>`,
     )}
     <line class="tick" x1=${edge} x2=${edge} y1=${top - 0.4 * em} y2=${bottom + 0.85 * em} />
     <line class="tick" x1=${left} x2=${right} y1=${bottom} y2=${bottom} />
@@ -99,8 +99,11 @@ export function beyondRecord(
   return range ? svg`${block(range.low, range.high, 'faint')}${block(0, range.low, '')}` : svg`${block(0, share, '')}`;
 }
 
-function inRows(marks: AgeMark[], { x, em, left, right }: Frame): (AgeMark & { row: number })[] {
-  const ends = [left - 2 * em, -Infinity];
+/** Rows of labels to leave room for: narrow pictures stack more of them. */
+const rowsFor = (width: number, em: number): number => (width < 26 * em ? 3 : 2);
+
+function inRows(marks: AgeMark[], { x, em, left, right, width }: Frame): (AgeMark & { row: number })[] {
+  const ends = Array.from({ length: rowsFor(width, em) }, () => left - 3 * em);
   const placed: (AgeMark & { row: number })[] = [];
   for (const mark of marks) {
     // Half a label's width at about half an em a letter.

@@ -1,4 +1,4 @@
-import { age } from '../shared/format.js';
+import { amountIn, lengths } from '../shared/format.js';
 import type { AgeMark, Frame } from './axis.js';
 import type { Speech } from './view.js';
 
@@ -6,14 +6,14 @@ import type { Speech } from './view.js';
 export function ageMarks(speech: Speech, { log, recordDays }: Frame): AgeMark[] {
   // A mark in the last hundredth would sit on the record's edge, which is a mark of its own.
   if (log) return human.map(({ days, key }) => ({ days, label: speech.say(key) })).filter(({ days }) => days <= recordDays * 1.01);
-  const unit = recordDays > 3 * yearDays ? yearDays : monthDays;
-  const every = Math.max(1, Math.ceil(recordDays / unit / 8));
-  const count = Math.floor(recordDays / unit / every + 0.01);
-  return Array.from({ length: count }, (_, index) => (index + 1) * every * unit).map((days) => ({ days, label: age(speech, days) }));
+  const unit = recordDays > 3 * lengths.year ? 'year' : recordDays > 3 * lengths.month ? 'month' : 'day';
+  const every = Math.max(1, Math.ceil(recordDays / lengths[unit] / 8));
+  const count = Math.floor(recordDays / lengths[unit] / every + 0.01);
+  return Array.from({ length: count }, (_, index) => (index + 1) * every).map((value) => ({
+    days: value * lengths[unit],
+    label: amountIn(speech.tag, value, unit),
+  }));
 }
-
-const yearDays = 365.2425;
-const monthDays = 30.436875;
 
 const human = [
   { days: 7, key: 'plot.week' },

@@ -1,6 +1,6 @@
 import { LitElement, html, svg, type PropertyValues, type TemplateResult } from 'lit';
 import type { DistributionWithRange } from '@rillage/sdk';
-import { checkDistribution } from '../rillage-station/check.js';
+import { asDistribution } from '../shared/check/distribution.js';
 import { chartFrame, frameStyles } from '../shared/chart-frame.js';
 import { Cursor } from '../shared/cursor.js';
 import { DataTable, tableStyles } from '../shared/data-table.js';
@@ -126,9 +126,7 @@ export class RillageAgePlot extends LitElement {
 
   override render(): TemplateResult {
     const view = this.distribution ? null : this.#link.view;
-    const distribution = checkDistribution(
-      this.distribution ?? (view?.reading?.status === 'withheld' ? null : view?.station?.distribution),
-    );
+    const distribution = asDistribution(this.distribution ?? (view?.reading?.status === 'withheld' ? null : view?.station?.distribution));
     if (!distribution) {
       this.#drawn = null;
       return html`<slot></slot>`;

@@ -4,7 +4,7 @@ import { age, date, number, percent } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
 import { cleanText } from '../shared/text.js';
 import type { ReadingKey } from './messages.js';
-import { headline } from './sentence.js';
+import { headline } from './headline.js';
 
 type Speech = Language<ReadingKey>;
 type Part = TemplateResult | typeof nothing;
@@ -14,9 +14,14 @@ export function trend(speech: Speech, reading: Reading): Part {
   const { trend: it } = reading;
   const now = it && headline(reading, it.days);
   if (!it || !now || now.share === null || reading.status === 'withheld') return nothing;
-  const key = ({ younger: 'reading.trendYounger', older: 'reading.trendOlder', usual: 'reading.trendUsual' } as const)[it.direction];
-  const values = { share: percent(speech, now.share), usual: percent(speech, it.usualShare), age: age(speech, now.days), years: it.years };
-  return html`<p part="trend" class="trend">${speech.say(key, values)}</p>`;
+  const values = {
+    how: speech.say(`reading.${it.direction}`),
+    share: percent(speech, now.share),
+    usual: percent(speech, it.usualShare),
+    age: age(speech, now.days),
+    years: it.years,
+  };
+  return html`<p part="trend" class="trend">${speech.say('reading.trend', values)}</p>`;
 }
 
 /** How sure, and the rules that led there. */

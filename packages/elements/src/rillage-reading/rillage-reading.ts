@@ -1,6 +1,6 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { Reading } from '@rillage/sdk';
-import { checkReading } from '../rillage-station/check.js';
+import { asReading } from '../shared/check/reading.js';
 import { moment } from '../shared/format.js';
 import { inkStyles } from '../shared/hatch.js';
 import { Language } from '../shared/language.js';
@@ -86,18 +86,18 @@ export class RillageReading extends LitElement {
   }
 
   override render(): TemplateResult {
-    const reading = this.reading ? checkReading(this.reading) : (this.#link.view?.reading ?? null);
+    const reading = this.reading ? asReading(this.reading) : (this.#link.view?.reading ?? null);
     if (!reading) return html`<slot></slot>`;
     const language = this.#language;
     const view = this.reading ? null : this.#link.view;
-    const { lead, rest } = statement(language, reading, this.youngerThan || 30, this.timeZone);
+    const said = statement(language, reading, this.youngerThan || 30, this.timeZone, () => this.requestUpdate());
     const name = cleanText(this.#link.view?.station?.name ?? reading.station?.name, 120);
     const full = this.form !== 'compact';
     return html`<article class=${classes(full, view?.stale)} lang=${language.tag} dir=${language.direction}>
       ${name ? html`<p part="name" class="name"><bdi>${name}</bdi></p>` : nothing}
       ${reading.station?.invented || view?.station?.invented ? html`<p class="invented">${language.say('reading.invented')}</p>` : nothing}
-      <p part="sentence" class="sentence">${lead}</p>
-      ${rest.length ? html`<p part="rest" class="rest">${rest.join(' ')}</p>` : nothing}
+      <p part="sentence" class="sentence" lang=${said.language} dir="auto">${said.lead}</p>
+      ${said.rest.length ? html`<p part="rest" class="rest" lang=${said.language} dir="auto">${said.rest.join(' ')}</p>` : nothing}
       <p part="date" class="date">
         ${this.#date(reading)}${view?.stale ? html` · <strong>${language.say('reading.old')}</strong>` : nothing}${view?.offline ? html` · <strong>${language.say('reading.kept')}</strong>` : nothing}
       </p>

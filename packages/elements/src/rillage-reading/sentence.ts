@@ -1,100 +1,39 @@
 import type { Reading } from '@rillage/sdk';
-import { age, ageSpan, date, dayCount, moment } from '../shared/format.js';
-import { frequency } from '../shared/frequency.js';
+import type { AmountKey } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
 import { cleanText } from '../shared/text.js';
-import type { ReadingKey } from './messages.js';
 
-type Speech = Pick<Language<ReadingKey>, 'tag' | 'say' | 'speaks'>;
-
-/** A statement in words: the sentence that says it, and what follows. */
+/** A statement in words: the sentence that says it, what follows, and the language they are in. */
 export interface Statement {
   lead: string;
   rest: string[];
+  language: string;
 }
 
 /**
- * The reading's own prose where it is in the page's language, else the same said from the numbers.
- * @param days  the age limit the sentence is about
+ * The reading's own sentences where they are in the page's language, else the same said from the numbers. Until the part that says them has
+ * loaded, or where it cannot be, the file's own, marked as what they are.
+ * @param days    the age limit the sentence is about
+ * @param loaded  called when the part has come
  */
-export function statement(speech: Speech, reading: Reading, days: number, timeZone: string): Statement {
-  const written = speech.speaks(reading.language) ? ownSentences(reading) : [];
-  const [lead, ...rest] = written.length ? written : compose(speech, reading, days, timeZone);
-  return { lead: lead ?? '', rest };
+export function statement(language: Language<AmountKey>, reading: Reading, days: number, timeZone: string, loaded: () => void): Statement {
+  const written = ownSentences(reading);
+  const fits = language.speaks(reading.language) && written.length > 0;
+  if (!fits && !composing) void loadComposing().then((came) => came && loaded());
+  const composed = fits || !composing ? null : composing.compose(language, reading, days, timeZone);
+  const [lead = '', ...rest] = composed ?? written;
+  return { lead, rest, language: composed || fits ? language.tag : cleanText(reading.language, 20) };
 }
 
-/** Sentences from the numbers of a reading: share within `days`, median, share beyond the record. */
-export function compose(speech: Speech, reading: Reading, days: number, timeZone: string): string[] {
-  const day = moment(speech.tag, reading.at, reading.stepDays, timeZone);
-  if (reading.status === 'withheld') return [speech.say('reading.withheld', { date: day }), ...reasons(speech, reading)];
-  const month = date(speech.tag, reading.evidence.recordFrom, { year: 'numeric', month: 'long' }, timeZone);
-  return [
-    lead(speech, reading, days, day),
-    median(speech, reading, month),
-    beyond(speech, reading, month),
-    assumed(speech, reading),
-  ].filter((text) => text !== '');
-}
+let composing: typeof import('./compose.js') | null = null;
 
-/** Why a reading is withheld: known codes in the page's language, others in the file's words. */
-export function reasons(speech: Speech, reading: Reading): string[] {
-  return reading.withheld.map(({ code, because }) => {
-    const own = speech.speaks(reading.language) ? cleanText(because) : '';
-    if (own) return own;
-    return known.has(code) ? speech.say(`reading.${code}` as ReadingKey) : cleanText(because) || cleanText(code, 60);
-  });
-}
-
-/** The share the sentence is about: at `days` where the record can place it, else at the longest age it can place, else the first. */
-export function headline(reading: Reading, days: number): Reading['younger'][number] | null {
-  const stated = reading.younger.filter(({ share }) => share !== null);
-  const placed = stated.filter(({ unplaced }) => unplaced <= negligible);
-  return placed.find((one) => one.days === days) ?? placed.at(-1) ?? stated[0] ?? null;
-}
-
-const known = new Set(['noOutflow', 'recordTooShort', 'storageRunsDown', 'preRecordDominates', 'fitNotConverged', 'notAssessed']);
-// Below half a per cent the unplaced share changes no rounded number.
-const negligible = 0.005;
-
-function lead(speech: Speech, reading: Reading, days: number, day: string): string {
-  const younger = headline(reading, days);
-  if (!younger || younger.share === null) return speech.say('reading.withheld', { date: day });
-  const water =
-    reading.of === 'discharge' ? speech.say('reading.stream') : speech.say('reading.outflow', { of: cleanText(reading.of, 60) });
-  const values = { water, date: day, period: dayCount(speech, younger.days) };
-  if (younger.unplaced > negligible) {
-    const whole = younger.range ?? { low: younger.share, high: younger.share + younger.unplaced };
-    return speech.say('reading.leadBetween', { ...values, low: Math.floor(whole.low * 100), high: Math.ceil(whole.high * 100), of: 100 });
+async function loadComposing(): Promise<boolean> {
+  try {
+    composing = await import('./compose.js');
+    return true;
+  } catch {
+    return false;
   }
-  const { count, of, bound, low, high } = frequency(younger.share, younger.range);
-  const key = bound === 'fewer' ? 'reading.leadFewer' : bound === 'more' ? 'reading.leadMore' : 'reading.lead';
-  const range = low === null || high === null ? speech.say('amount.unassessed') : speech.say('reading.likely', { low, high, of });
-  return speech.say(key, { ...values, count, of, range });
-}
-
-function median(speech: Speech, { median: it }: Reading, month: string): string {
-  if (!it) return '';
-  if (it.beyondRecord) return speech.say('reading.halfBeyond', { month });
-  if (!it.range) return speech.say('reading.halfAbout', { age: age(speech, it.days) });
-  return speech.say('reading.half', { age: ageSpan(speech, it.range.low, it.range.high, it.range.highBeyondRecord) });
-}
-
-function beyond(speech: Speech, { olderThanRecord: { share, range } }: Reading, month: string): string {
-  if (share === null || Math.max(share, range?.high ?? 0) < negligible) return '';
-  const { count, of, bound, low, high } = frequency(share, range);
-  const sure = low === null || high === null ? speech.say('amount.unassessed') : speech.say('reading.likely', { low, high, of });
-  return speech.say(bound === 'fewer' ? 'reading.beyondFewer' : bound === 'more' ? 'reading.beyondMore' : 'reading.beyond', {
-    count,
-    of,
-    month,
-    range: sure,
-  });
-}
-
-function assumed(speech: Speech, { assumedShare }: Reading): string {
-  if (assumedShare <= negligible) return '';
-  const { count, of } = frequency(assumedShare, null);
-  return speech.say('reading.assumed', { count, of });
 }
 
 /** The file's own sentences; one text where it does not give them singly. */

@@ -94,6 +94,9 @@ export const readingStyles = css`
     padding-block: 0.9em;
     border-block-end: 1px solid var(--_hairline);
   }
+  .date + .pair {
+    margin-block-start: 1.5em;
+  }
   ul {
     padding-inline-start: 1.1em;
     list-style: '– ';
@@ -136,6 +139,10 @@ export const readingStyles = css`
     }
     tbody th {
       inline-size: 50%;
+    }
+    th,
+    td {
+      overflow-wrap: anywhere;
     }
     td {
       font-size: var(--_size-1);

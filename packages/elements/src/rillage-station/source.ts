@@ -1,6 +1,6 @@
 import type { Reading, Station } from '@rillage/sdk';
 import { openCache } from '../shared/storage.js';
-import { checkStation } from './check.js';
+import { checkStation } from '../shared/check/station.js';
 import { byteCap, load, LoadFailure, type LoadProblem } from './load.js';
 
 export interface SourceProblem {

@@ -116,6 +116,7 @@ export const tableStyles = css`
     font-weight: normal;
     text-align: start;
     vertical-align: baseline;
+    overflow-wrap: anywhere;
   }
   thead th {
     border-block-end-color: var(--_ink);

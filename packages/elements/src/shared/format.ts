@@ -34,11 +34,11 @@ export function percentSpan(speech: Speech, range: { low: number; high: number }
 export function age(speech: Speech, days: number): string {
   const unit = unitFor(days);
   const step = stepFor(days, unit);
-  return inUnit(speech.tag, Math.round(days / lengths[unit] / step) * step, unit);
+  return amountIn(speech.tag, Math.round(days / lengths[unit] / step) * step, unit);
 }
 
 /** A limit as whole days, however many. */
-export const dayCount = (speech: Speech, days: number): string => inUnit(speech.tag, days, 'day');
+export const dayCount = (speech: Speech, days: number): string => amountIn(speech.tag, days, 'day');
 
 /** Two ages as one phrase in one unit, rounded outwards so that the range is never narrower than it is. */
 export function ageSpan(speech: Speech, low: number, high: number, highBeyondRecord = false): string {
@@ -47,7 +47,7 @@ export function ageSpan(speech: Speech, low: number, high: number, highBeyondRec
   const down = Math.floor(low / lengths[unit] / step + tiny) * step;
   // Beyond the record the upper end is a lower bound, which only rounding down keeps true.
   const up = (highBeyondRecord ? Math.floor(high / lengths[unit] / step + tiny) : Math.ceil(high / lengths[unit] / step - tiny)) * step;
-  const older = inUnit(speech.tag, up, unit);
+  const older = amountIn(speech.tag, up, unit);
   const first = down > 0 || low <= 0 ? number(speech.tag, { maximumFractionDigits: 1 }).format(down) : null;
   if (!highBeyondRecord)
     return first === null
@@ -91,7 +91,7 @@ export const msPerDay = 86_400_000;
 const tiny = 1e-6;
 const formats = new Map<string, Intl.NumberFormat>();
 // A year of 365.25 days and its twelfth, as the reading's own sentence counts them.
-const lengths = { day: 1, month: 30.4375, year: 365.25 };
+export const lengths = { day: 1, month: 30.4375, year: 365.25 };
 
 type AgeUnit = 'day' | 'month' | 'year';
 
@@ -101,5 +101,6 @@ const unitFor = (days: number): AgeUnit => (days < 60 ? 'day' : days < 731 ? 'mo
 const stepFor = (days: number, unit: AgeUnit): number =>
   (unit === 'day' && days < 3) || (unit === 'year' && days < 10 * lengths.year) ? 0.1 : 1;
 
-const inUnit = (language: string, value: number, unit: AgeUnit): string =>
+/** A number with its unit, as the language writes it. */
+export const amountIn = (language: string, value: number, unit: AgeUnit): string =>
   number(language, { style: 'unit', unit, unitDisplay: 'long', maximumFractionDigits: 1 }).format(value);

@@ -1,5 +1,5 @@
 import type { ReactiveController, ReactiveControllerHost } from 'lit';
-import { catalogueFor, fill, hasCatalogue, loadCatalogue, type Messages } from './messages.js';
+import { catalogueFor, fill, hasCatalogue, loadCatalogue, type Message, type Messages } from './messages.js';
 
 /** A host whose page may replace single messages. */
 export interface Speaker extends ReactiveControllerHost, HTMLElement {
@@ -50,7 +50,12 @@ export class Language<Key extends string> implements ReactiveController {
 
   /** The message with its values put in: the host's own first, then the page's or the shipped catalogue, then English. */
   say(key: Key, values: Record<string, string | number> = {}): string {
-    const message = own(this.host.messages, key) ?? own(catalogueFor(this.tag), key) ?? own(catalogueFor('en'), key) ?? this.english[key];
+    return this.sayFrom(this.english, key, values);
+  }
+
+  /** The same for a part that brings its own English. */
+  sayFrom<Name extends string>(english: Record<Name, Message>, key: Name, values: Record<string, string | number> = {}): string {
+    const message = own(this.host.messages, key) ?? own(catalogueFor(this.tag), key) ?? own(catalogueFor('en'), key) ?? english[key];
     return fill(message, values, this.tag);
   }
 
