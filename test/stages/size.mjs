@@ -15,9 +15,7 @@ export async function size(tally) {
     });
     if (!built) continue;
     const kb = gzipSync(built.code, { level: 9 }).length / 1000;
-    console.log(
-      `  ${name.padEnd(16)} ${kb.toFixed(1).padStart(5)} of ${limitKb} kB${remark(kb / limitKb)}`,
-    );
+    console.log(`  ${name.padEnd(16)} ${kb.toFixed(1).padStart(5)} of ${limitKb} kB${remark(kb / limitKb)}`);
     await tally.check(`${name} within ${limitKb} kB`, () => {
       if (kb > limitKb) throw new Error(`${kb.toFixed(2)} kB\n${largest(built.modules)}`);
     });

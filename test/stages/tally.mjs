@@ -32,6 +32,9 @@ export class Tally {
   }
 }
 
+/** In a log, colours are noise. */
+const plain = process.stdout.isTTY ? {} : { NO_COLOR: '1', FORCE_COLOR: '0' };
+
 /**
  * Runs a program to its end, in the repository unless told otherwise.
  * @param quiet  keep the output back unless it fails
@@ -39,7 +42,12 @@ export class Tally {
  */
 export function run(command, args, { cwd = at('.'), env = {}, quiet = true, timeoutMs = 600_000 } = {}) {
   return new Promise((settle) => {
-    const child = spawn(command, args, { cwd, env: { ...process.env, ...env }, stdio: ['ignore', 'pipe', 'pipe'], timeout: timeoutMs });
+    const child = spawn(command, args, {
+      cwd,
+      env: { ...process.env, ...plain, ...env },
+      stdio: ['ignore', 'pipe', 'pipe'],
+      timeout: timeoutMs,
+    });
     let output = '';
     let stdout = '';
     const take = (stream, isOut) =>

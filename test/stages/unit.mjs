@@ -17,6 +17,18 @@ export async function unit(tally) {
   const broken = testResults.filter((file) => file.status === 'failed' && file.assertionResults.every((test) => test.status !== 'failed'));
   tally.add({ passed: numPassedTests, failed: numFailedTests }, 'a unit test');
   for (const file of broken) tally.fail(file.name.replace(at('.'), ''), file.message || 'could not be loaded');
-  if (numPendingTests + numTodoTests > 0) tally.fail('skips', `${numPendingTests + numTodoTests} tests were skipped`);
+  // Where a file's preparation fails, its tests count as skipped; the file is a failure already.
+  if (broken.length === 0 && numPendingTests + numTodoTests > 0)
+    tally.fail('skips', `${numPendingTests + numTodoTests} tests were skipped`);
+  for (const [name, seconds] of slowest(testResults)) console.log(`  ${seconds.toFixed(1).padStart(6)} s  ${name}`);
   if (status !== 0 && tally.failed === 0) tally.fail('vitest', `ended with status ${status}`);
+}
+
+/** Files that take longest, where they take more than a few seconds. */
+function slowest(files) {
+  return files
+    .map((file) => [file.name.replace(at('.'), ''), (file.endTime - file.startTime) / 1000])
+    .filter(([, seconds]) => seconds > 5)
+    .sort(([, a], [, b]) => b - a)
+    .slice(0, 8);
 }
