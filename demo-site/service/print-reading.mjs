@@ -28,10 +28,10 @@ if (reading.status === 'given') {
   lines.push(row('older than the record', percent(reading.olderThanRecord.share), range(reading.olderThanRecord, percent)), '');
 }
 const { evidence } = reading;
+// The record ends where its last step does; a person names the day before that.
+const lastDay = new Date(Date.parse(evidence.recordTo) - 1).toISOString().slice(0, 10);
 lines.push(
-  ...wrap(
-    `Rests on the record from ${evidence.recordFrom.slice(0, 10)} to ${evidence.recordTo.slice(0, 10)}. ${evidence.method} SDK ${evidence.version}.`,
-  ),
+  ...wrap(`Rests on the record from ${evidence.recordFrom.slice(0, 10)} to ${lastDay}. ${evidence.method} SDK ${evidence.version}.`),
   '',
   ...wrap(reading.caution),
 );

@@ -102,8 +102,8 @@ describe('makeReading(run), withheld', () => {
     ['noOutflow', { flow: 0 }, /there was no outflow/],
     ['recordTooShort', { steps: 5 }, /the record is only 5 days long/],
     ['recordTooShort', { steps: 1 }, /the record is only 1 day long/],
-    ['storageRunsDown', { storage: 450 }, /drains the storage/],
-    ['storageRunsDown', { storage: 750 }, /drains the storage/],
+    ['storageRunsDown', { storage: 150, flow: 9 }, /drains the storage/],
+    ['storageRunsDown', { storage: 600 }, /drains the storage/],
     [
       'preRecordDominates',
       { steps: 60, preRecord: 0.95, shares: { 7: 0.03, 30: 0.05 } },
@@ -139,8 +139,13 @@ describe('makeReading(run), withheld', () => {
     expect(reading.sentences?.[1]).toMatch(/older than the record/);
   });
 
+  it('not for what a season or dry years take from storage', () => {
+    expect(makeReading(handmadeRun({ storage: 860, steps: 200 })).status).toBe('given');
+    expect(makeReading(handmadeRun({ storage: 750 })).status).toBe('given');
+  });
+
   it('judges the balance of a resumed run by the outflow handed over', () => {
-    const resumed = handmadeRun({ steps: 1, stepsBefore: 3000, storage: 750, start: '2025-03-14T00:00:00Z' });
+    const resumed = handmadeRun({ steps: 1, stepsBefore: 3000, storage: 600, start: '2025-03-14T00:00:00Z' });
     expect(makeReading(resumed).status).toBe('given');
     expect(makeReading(resumed, { balance: { outflow: 2000 } }).withheld[0]?.code).toBe('storageRunsDown');
   });

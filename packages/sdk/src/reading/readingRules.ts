@@ -10,11 +10,12 @@ export interface ReadingRules {
   /** The same while the record is shorter than `longRecordDays`: "older than the record" then says next to nothing. */
   mostPreRecordShortRecord: number;
   longRecordDays: number;
-  /** Withheld `storageRunsDown` when storage has fallen by more than this share of the initial storage. */
+  /** Withheld `storageRunsDown` when storage has fallen by more than this share of the initial storage, */
   mostStorageLoss: number;
-  /** The same, as a share of all outflow since the record began, from `balanceRecordDays` on: a drift that dry years do not make. */
+  /** or by more than this, mm, which seasons and dry years can take, */
+  usualSwing: number;
+  /** and this share of all outflow since the record began, which only a record that does not balance takes. */
   mostDrift: number;
-  balanceRecordDays: number;
   /** Withheld `samplesTooOld` when the last sample is older than this, days. Only where samples are known of. */
   oldestSampleDays: number;
   /** `firm` needs ranges of the shares no wider than this, */
@@ -30,9 +31,9 @@ export const DEFAULT_READING_RULES: Readonly<ReadingRules> = {
   mostPreRecord: 0.99,
   mostPreRecordShortRecord: 0.9,
   longRecordDays: 1096,
-  mostStorageLoss: 0.5,
+  mostStorageLoss: 0.8,
+  usualSwing: 150,
   mostDrift: 0.1,
-  balanceRecordDays: 730,
   oldestSampleDays: 200,
   firmWidth: 0.2,
   firmSampleDays: 62,
@@ -101,5 +102,5 @@ export const judgeReading: JudgeReading = (facts, rules) => {
 function runsDown(facts: ReadingFacts, rules: ReadingRules): boolean {
   const loss = facts.initialStorage - facts.storage;
   if (loss > rules.mostStorageLoss * facts.initialStorage) return true;
-  return facts.recordDays >= rules.balanceRecordDays && loss > rules.mostDrift * facts.outflowSinceStart;
+  return loss > rules.usualSwing + rules.mostDrift * facts.outflowSinceStart;
 }
