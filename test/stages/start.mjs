@@ -41,7 +41,7 @@ async function checkSite(address) {
     await answer.arrayBuffer();
     if (integrityOf(at(`demo-site/public/lib/${name}`)) !== hashes[name]) throw new Error(`the hash of lib/${name} is another`);
   }
-  const told = [...text.matchAll(/src="\/?lib\/([\w.-]+)"[^>]*integrity="([^"]+)"/g)];
+  const told = [...text.matchAll(/src="(?:\.?\/)?lib\/([\w.-]+)"[^>]*integrity="([^"]+)"/g)];
   for (const [, name, hash] of told) if (hashes[name] !== hash) throw new Error(`the page states an old hash of lib/${name}`);
 }
 
