@@ -176,7 +176,7 @@ describe('rillage-reading: what comes from outside', () => {
     const element = await mount('rillage-reading', { reading });
     expect(element.shadowRoot!.querySelector('img')).to.equal(null);
     expect(shown(element)).to.contain('<img src=x onerror=alert(1)>gnp__proto__');
-    expect(element.shadowRoot!.textContent).not.to.match(/[\u202A-\u202E\u2066-\u2069\u0000]/);
+    expect(element.shadowRoot!.textContent).not.to.match(/[\u202A-\u202E\u2066-\u2069]|\0/);
   });
 
   it('cuts text of any length', async () => {

@@ -43,7 +43,7 @@ export function densityView({ distribution, middle, low, high, frame, speech }: 
     draw: (_, point) => svg`${bars.map((bar, index) => {
       const middleX = (bar.left + bar.right) / 2;
       const colour = ageClass(Math.sqrt(Math.max(bar.from, youngest, 0.5) * bar.to));
-      return svg`<rect class="age-${colour} ink" x=${bar.left} width=${bar.right - bar.left} y=${y(bar.share)} height=${y(0) - y(bar.share)} />
+      return svg`<rect class="age-${colour} ink bar" x=${bar.left} width=${bar.right - bar.left} y=${y(bar.share)} height=${y(0) - y(bar.share)} />
         ${bar.range ? svg`<line class="range" x1=${middleX} x2=${middleX} y1=${y(bar.range.low)} y2=${y(bar.range.high)} />` : nothing}
         ${index === point ? svg`<rect class="cursor" x=${bar.left} width=${bar.right - bar.left} y=${frame.top} height=${frame.bottom - frame.top} />` : nothing}`;
     })}

@@ -89,7 +89,7 @@ export const readingStyles = css`
   }
   .pair {
     display: grid;
-    grid-template-columns: minmax(8rem, 1fr) 4fr;
+    grid-template-columns: minmax(8rem, 1fr) minmax(0, 4fr);
     gap: 0.25em 1.5em;
     padding-block: 0.9em;
     border-block-end: 1px solid var(--_hairline);
@@ -148,7 +148,7 @@ export const readingStyles = css`
       font-size: var(--_size-1);
     }
     .pair {
-      grid-template-columns: 1fr;
+      grid-template-columns: minmax(0, 1fr);
     }
   }
   @media print {
