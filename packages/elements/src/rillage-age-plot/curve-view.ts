@@ -1,5 +1,5 @@
 import { nothing, svg } from 'lit';
-import { age, percent, percentSpan } from '../shared/format.js';
+import { age, olderThan, percent, percentSpan } from '../shared/format.js';
 import { classSlices, type Frame } from './axis.js';
 import { shareAt, type Curve } from './curve.js';
 import type { Drawn, View } from './view.js';
@@ -35,7 +35,7 @@ export function curveView({ distribution, middle, low, high, frame, speech }: Dr
     rows: [
       ...stops.map((days) => [age(speech, days), percent(speech, shareAt(middle, days)), percentSpan(speech, range(days))]),
       [
-        speech.say('amount.older', { age: age(speech, distribution.recordDays) }),
+        olderThan(speech, distribution.recordDays),
         percent(speech, distribution.preRecordShare),
         percentSpan(speech, distribution.preRecordRange),
       ],

@@ -1,6 +1,6 @@
 import { nothing, svg, type TemplateResult } from 'lit';
 import { ageClass } from '../shared/age-ramp.js';
-import { age, ageSpan } from '../shared/format.js';
+import { age, ageSpan, olderThan } from '../shared/format.js';
 import { ageAt } from './curve.js';
 import type { Drawn, View } from './view.js';
 
@@ -28,7 +28,7 @@ export function dropsView({ middle, low, high, frame, speech }: Drawn): View {
       ? ageSpan(speech, from, to)
       : from <= recordDays
         ? ageSpan(speech, from, recordDays, true)
-        : speech.say('amount.older', { age: age(speech, recordDays) });
+        : olderThan(speech, recordDays);
   return {
     series: 1,
     places: all.map(({ middle: days }) => place(days)),
@@ -55,7 +55,7 @@ export function dropsView({ middle, low, high, frame, speech }: Drawn): View {
     columns: [speech.say('plot.drop'), speech.say('plot.age'), speech.say('plot.range')],
     rows: all.map(({ middle: days, range }, index) => [
       `${index + 1}`,
-      days <= recordDays ? age(speech, days) : speech.say('amount.older', { age: age(speech, recordDays) }),
+      days <= recordDays ? age(speech, days) : olderThan(speech, recordDays),
       range ? rangeText(range) : speech.say('amount.unassessed'),
     ]),
   };

@@ -1,6 +1,6 @@
 import { html, type TemplateResult } from 'lit';
 import type { Reading } from '@rillage/sdk';
-import { age, ageSpan, percent, percentSpan } from '../shared/format.js';
+import { age, ageSpan, olderThan, percent, percentSpan } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
 import type { ReadingKey } from './messages.js';
 import { strip, type Strip } from './strip.js';
@@ -43,7 +43,7 @@ function older(speech: Language<ReadingKey>, { olderThanRecord: { share: value, 
 function median(speech: Language<ReadingKey>, { median: it }: Reading): TemplateResult {
   const label = speech.say('reading.medianRow');
   if (!it) return row(label, speech.say('amount.unknown'), speech.say('amount.unassessed'), null);
-  const value = it.beyondRecord ? speech.say('amount.older', { age: age(speech, it.days) }) : age(speech, it.days);
+  const value = it.beyondRecord ? olderThan(speech, it.days) : age(speech, it.days);
   const range = it.range ? ageSpan(speech, it.range.low, it.range.high, it.range.highBeyondRecord) : speech.say('amount.unassessed');
   return row(label, value, range, null);
 }

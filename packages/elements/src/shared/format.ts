@@ -31,11 +31,15 @@ export function percentSpan(speech: Speech, range: { low: number; high: number }
 }
 
 /** An age in the unit people would use: days up to two months, months up to two years, years beyond. */
-export function age(speech: Speech, days: number): string {
+export function age(speech: Speech, days: number, round: (value: number) => number = Math.round): string {
   const unit = unitFor(days);
   const step = stepFor(days, unit);
-  return amountIn(speech.tag, Math.round(days / lengths[unit] / step) * step, unit);
+  return amountIn(speech.tag, round(days / lengths[unit] / step) * step, unit);
 }
+
+/** "More than" an age, which only rounding down keeps true. Ten calendar years may be a day short of ten mean ones: a twentieth of a step is forgiven. */
+export const olderThan = (speech: Speech, days: number): string =>
+  speech.say('amount.older', { age: age(speech, days, (value) => Math.floor(value + 0.05)) });
 
 /** A limit as whole days, however many. */
 export const dayCount = (speech: Speech, days: number): string => amountIn(speech.tag, days, 'day');
@@ -44,18 +48,15 @@ export const dayCount = (speech: Speech, days: number): string => amountIn(speec
 export function ageSpan(speech: Speech, low: number, high: number, highBeyondRecord = false): string {
   const unit = unitFor(high);
   const step = stepFor(high, unit);
-  const down = Math.floor(low / lengths[unit] / step + tiny) * step;
-  // Beyond the record the upper end is a lower bound, which only rounding down keeps true.
-  const up = (highBeyondRecord ? Math.floor(high / lengths[unit] / step + tiny) : Math.ceil(high / lengths[unit] / step - tiny)) * step;
-  const older = amountIn(speech.tag, up, unit);
-  const first = down > 0 || low <= 0 ? number(speech.tag, { maximumFractionDigits: 1 }).format(down) : null;
-  if (!highBeyondRecord)
-    return first === null
-      ? speech.say('amount.span', { low: age(speech, low), high: older })
-      : down === up
-        ? older
-        : speech.say('amount.span', { low: first, high: older });
-  return speech.say('amount.span', { low: age(speech, low), high: speech.say('amount.older', { age: older }) });
+  const floor = (value: number): number => Math.floor(value + tiny);
+  const down = floor(low / lengths[unit] / step) * step;
+  if (highBeyondRecord) return speech.say('amount.span', { low: age(speech, low, floor), high: olderThan(speech, high) });
+  const up = Math.ceil(high / lengths[unit] / step - tiny) * step;
+  const last = amountIn(speech.tag, up, unit);
+  if (down === up) return last;
+  // A lower end that would be nothing in the upper one's unit keeps its own.
+  const first = down > 0 || low <= 0 ? number(speech.tag, { maximumFractionDigits: 1 }).format(down) : age(speech, low, floor);
+  return speech.say('amount.span', { low: first, high: last });
 }
 
 /** The day (or, below daily steps, the moment) a step stands for, from the instant at its end. */
