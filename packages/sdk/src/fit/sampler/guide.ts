@@ -13,6 +13,8 @@ export interface GuidePart {
   mean: number[];
   /** Lower triangle L of scale = L Lᵀ, by rows. */
   root: number[][];
+  /** log density at the mean, weight included, up to a constant of the number of dimensions. */
+  logHeight: number;
 }
 
 /** One draw. @param random a seeded generator */
@@ -30,28 +32,29 @@ export function drawGuide(guide: Guide, random: { uniform(): number; normal(): n
   });
 }
 
-/** log density, up to a constant that is the same for all points of all guides with the same degrees. */
+/** log density, up to a constant that depends on the number of dimensions alone. */
 export function guideLogDensity(guide: Guide, point: readonly number[]): number {
-  return logSumExp(guide.parts.map((part) => Math.log(part.weight) + partLogDensity(part, point)));
+  return logSumExp(guide.parts.map((part) => partLogDensity(part, point)));
 }
 
-/** log density of one part without its weight. */
-export function partLogDensity({ mean, root, degrees }: GuidePart, point: readonly number[]): number {
+/** log of a part's weighted density, up to the same constant. */
+export function partLogDensity({ mean, root, degrees, logHeight }: GuidePart, point: readonly number[]): number {
   const dimensions = mean.length;
-  let logDeterminant = 0;
+  const solved = new Float64Array(dimensions);
   let distance = 0;
-  const solved = new Array<number>(dimensions);
   for (let j = 0; j < dimensions; j++) {
     let rest = point[j] - mean[j];
     for (let k = 0; k < j; k++) rest -= root[j][k] * solved[k];
     solved[j] = rest / root[j][j];
     distance += solved[j] * solved[j];
-    logDeterminant += Math.log(root[j][j]);
   }
-  return tailConstant(degrees, dimensions) - logDeterminant - ((degrees + dimensions) / 2) * Math.log1p(distance / degrees);
+  return logHeight - ((degrees + dimensions) / 2) * Math.log1p(distance / degrees);
 }
 
-/** log of Γ((ν + d)/2) / (Γ(ν/2) ν^(d/2)); π^(d/2) is left out. */
-function tailConstant(degrees: number, dimensions: number): number {
-  return logGamma((degrees + dimensions) / 2) - logGamma(degrees / 2) - (dimensions / 2) * Math.log(degrees);
+/** A part with its height at the mean: weight · Γ((ν + d)/2) / (Γ(ν/2) ν^(d/2) |L|); π^(d/2) is left out. */
+export function guidePart(weight: number, degrees: number, mean: number[], root: number[][]): GuidePart {
+  const dimensions = mean.length;
+  const logDeterminant = root.reduce((sum, row, j) => sum + Math.log(row[j]), 0);
+  const tails = logGamma((degrees + dimensions) / 2) - logGamma(degrees / 2) - (dimensions / 2) * Math.log(degrees);
+  return { weight, degrees, mean, root, logHeight: Math.log(weight) + tails - logDeterminant };
 }

@@ -1,14 +1,16 @@
 import { logSumExp } from '../leaveOneOut.js';
-import { type Guide, type GuidePart, guideLogDensity, partLogDensity } from './guide.js';
+import { type Guide, type GuidePart, guideLogDensity, guidePart, partLogDensity } from './guide.js';
 
-/** Parts follow the posterior closely; one wide part with heavy tails lets a chain in an unforeseen place go again. */
+/** Parts follow the posterior closely; each has a skirt, and all have one wide part, whose heavy tails let a chain that strayed go again. */
 const DEGREES = 10;
 const WIDE_DEGREES = 4;
-const WIDE_WEIGHT = 0.2;
+const WIDE_WEIGHT = 0.05;
 const WIDE_STRETCH = 1.5;
+const SKIRT_SHARE = 0.25;
+const SKIRT_STRETCH = 2;
 const MOST_PARTS = 8;
-const MOST_POINTS = 600;
-const ROUNDS = 20;
+const MOST_POINTS = 400;
+const ROUNDS = 10;
 
 type Points = readonly (readonly number[])[];
 
@@ -23,12 +25,17 @@ export function fitGuide(chains: readonly Points[]): Guide | null {
   if (all.length < 5 * (all[0]?.length ?? Infinity)) return null;
   const halves = [0, 1].map((half) => thinned(chains.filter((_, c) => c % 2 === half).flat()));
   let best: { parts: number; score: number } | null = null;
+  let worse = 0;
   for (let parts = 1; parts <= MOST_PARTS && all.length >= 10 * parts * all[0].length; parts++) {
     const fits = halves.map((half) => fitMixture(half, parts));
     if (!fits[0] || !fits[1]) break;
     const score = meanLogDensity(fits[0], halves[1]) + meanLogDensity(fits[1], halves[0]);
-    if (best && score <= best.score) continue;
-    best = { parts, score };
+    if (best && score <= best.score) {
+      if (++worse === 2) break;
+    } else {
+      best = { parts, score };
+      worse = 0;
+    }
   }
   return fitMixture(all, best?.parts ?? 1) ?? fitMixture(all, 1);
 }
@@ -59,11 +66,13 @@ function fitMixture(points: Points, parts: number): Guide | null {
     mixture = next;
     responsibilities = responsibilitiesOf(points, mixture);
   }
-  return { parts: [...mixture, wide] };
+  const cores = mixture.map(({ weight, mean, root }) => guidePart(weight * (1 - SKIRT_SHARE), DEGREES, mean, root));
+  const skirts = mixture.map(({ weight, mean, root }) => guidePart(weight * SKIRT_SHARE, WIDE_DEGREES, mean, scaled(root, SKIRT_STRETCH)));
+  return { parts: [...cores, ...skirts, wide] };
 }
 
 function responsibilitiesOf(points: Points, mixture: readonly GuidePart[]): number[][] {
-  const logs = points.map((point) => mixture.map((part) => Math.log(part.weight) + partLogDensity(part, point)));
+  const logs = points.map((point) => mixture.map((part) => partLogDensity(part, point)));
   const totals = logs.map(logSumExp);
   return mixture.map((_, k) => points.map((__, i) => Math.exp(logs[i][k] - totals[i])));
 }
@@ -85,8 +94,8 @@ function momentsOf(points: Points, weights: readonly number[]): Moments | null {
   const covariance = mean.map(() => new Array<number>(dimensions).fill(0));
   points.forEach((point, i) => {
     for (let j = 0; j < dimensions; j++) {
-      const scaled = (weights[i] * (point[j] - mean[j])) / total;
-      for (let k = 0; k <= j; k++) covariance[j][k] += scaled * (point[k] - mean[k]);
+      const share = (weights[i] * (point[j] - mean[j])) / total;
+      for (let k = 0; k <= j; k++) covariance[j][k] += share * (point[k] - mean[k]);
     }
   });
   return { total, mean, covariance };
@@ -103,8 +112,12 @@ function shrunk(moments: Moments, whole: Moments, parts: number): Moments {
 }
 
 function partOf(weight: number, { mean, covariance }: Moments, stretch: number, degrees: number): GuidePart | null {
-  const root = cholesky(covariance.map((row) => row.map((x) => stretch * stretch * x)));
-  return root && { weight, degrees, mean, root };
+  const root = cholesky(scaled(covariance, stretch * stretch));
+  return root && guidePart(weight, degrees, mean, root);
+}
+
+function scaled(matrix: readonly number[][], factor: number): number[][] {
+  return matrix.map((row) => row.map((x) => factor * x));
 }
 
 /** Equal slices of the points along the direction of greatest spread, as weights of 0 and 1. */
