@@ -115,7 +115,7 @@ async function answerWith(page, change) {
   const body = change(station);
   await page.setRequestInterception(true);
   page.on('request', (request) => {
-    if (!request.url().endsWith('/data/station.json')) return request.continue();
+    if (!request.url().endsWith('/data/thessle-brook.json')) return request.continue();
     return request.respond(
       body ? { status: 200, contentType: 'application/json', body: JSON.stringify(body) } : { status: 404, body: 'not here' },
     );
