@@ -1,6 +1,7 @@
 import { LitElement, html, svg, type PropertyValues, type TemplateResult } from 'lit';
 import type { DistributionWithRange } from '@rillage/sdk';
 import { asDistribution } from '../shared/check/distribution.js';
+import { buttonStyles } from '../shared/buttons.js';
 import { chartFrame, frameStyles } from '../shared/chart-frame.js';
 import { Cursor } from '../shared/cursor.js';
 import { DataTable, tableStyles } from '../shared/data-table.js';
@@ -60,7 +61,7 @@ export class RillageAgePlot extends LitElement {
   /** Version of the package this class came from. */
   static readonly version = version;
 
-  static override styles = [theme, inkStyles, tableStyles, frameStyles, agePlotStyles];
+  static override styles = [theme, buttonStyles, inkStyles, tableStyles, frameStyles, agePlotStyles];
 
   static override properties = {
     view: { type: String, reflect: true },

@@ -234,7 +234,9 @@ export class RillageStation extends LitElement {
     if (this.#view.offline || this.#view.state === 'failed') this.reload();
   };
   #look = (): void => this.requestUpdate();
-  #parsed = (): void => this.reload();
+  #parsed = (): void => {
+    if (this.#jsonChild() !== this.#childText) this.reload();
+  };
 }
 
 const longestTimer = 2 ** 31 - 2000;

@@ -55,7 +55,7 @@ export function chartFrame(frame: ChartFrame): TemplateResult {
     >
       ${frame.picture}
     </div>
-    <p class="readout" part="readout" aria-hidden="true">${frame.readout}</p>
+    <p class="readout" part="readout" aria-hidden=${cursor.point !== null}>${frame.readout}</p>
     <p class="unseen" id="keys">${say('frame.keys')}</p>
     <div class="unseen" role="status">${cursor.announcement}</div>
     <div class=${frame.showsTable ? 'table' : 'table printed'}>${frame.table}</div>

@@ -28,6 +28,11 @@ export class Language<Key extends string> implements ReactiveController {
     this.read();
   }
 
+  /** Also sees a `lang` within a shadow root, which no observer of the document does. */
+  hostUpdate(): void {
+    this.read();
+  }
+
   hostDisconnected(): void {
     speakers.delete(this);
     if (!speakers.size) unwatchLang();
