@@ -5,7 +5,19 @@ import type { ColumnRunner } from './runner.js';
 /** A parcel that an earlier run followed: kept apart from its neighbours, as that run kept it. */
 const FOLLOWED_BEFORE = 0x7fffffff;
 const PER_PARCEL = ['depth', 'entryStart', 'entryEnd', 'enteredBefore', 'enteredAfter', 'followed'] as const;
-const SCALARS = ['count', 'assumed', 'preRecord', 'total', 'previousInflow', 'entered', 'initial', 'in', 'out', 'wetnessLow', 'wetnessHigh'] as const;
+const SCALARS = [
+  'count',
+  'assumed',
+  'preRecord',
+  'total',
+  'previousInflow',
+  'entered',
+  'initial',
+  'in',
+  'out',
+  'wetnessLow',
+  'wetnessHigh',
+] as const;
 
 /** The state of a runner at the end of its last step, as JSON-safe data that gives the same bits back. */
 export function makeCheckpoint(runner: ColumnRunner): Checkpoint {
@@ -71,7 +83,12 @@ export function restore(runner: ColumnRunner, checkpoint: Checkpoint): void {
     clock.amounts = [...list('clockAmounts')];
   }
   runner.ledgers.forEach((ledger, t) => {
-    [ledger.entered, ledger.left, ledger.reacted, ledger.held] = list('ledgers').slice(4 * t, 4 * t + 4) as [number, number, number, number];
+    [ledger.entered, ledger.left, ledger.reacted, ledger.held] = list('ledgers').slice(4 * t, 4 * t + 4) as [
+      number,
+      number,
+      number,
+      number,
+    ];
   });
   runner.before = checkpoint.steps;
   runner.entered = scalar('entered');
@@ -121,7 +138,8 @@ export function checkCheckpoint(data: unknown): asserts data is Checkpoint {
 
 function checkList(list: unknown, length: number, key: string, fail: (path: string, expected: string, received: unknown) => never): void {
   const good = Array.isArray(list) && list.length === length && list.every((value) => Number.isFinite(value));
-  if (!good) fail(`checkpoint.state.${key}`, `${Math.max(length, 0)} finite numbers`, Array.isArray(list) ? `a list of ${list.length}` : list);
+  if (!good)
+    fail(`checkpoint.state.${key}`, `${Math.max(length, 0)} finite numbers`, Array.isArray(list) ? `a list of ${list.length}` : list);
 }
 
 /** Problems of continuing a checkpoint with a forcing: another step, another catchment's outflows, a gap or an overlap in time. */

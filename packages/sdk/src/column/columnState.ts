@@ -1,4 +1,6 @@
 const FIRST_CAPACITY = 256;
+/** Share of an outflow that a merged parcel may give: within it, ages and concentrations are no longer told apart. */
+const LARGEST_MERGED = 0.006;
 
 /**
  * The storage as parcels, oldest at index 0, youngest last. Times are in steps since the record began (negative during spin-up),
@@ -73,6 +75,26 @@ export class ColumnState {
   }
 
   /**
+   * Adds what was taken in a part of a step to `sum` ([outflows × capacity], replaced if it is too short); after the last part the whole
+   * step's amounts stand in `taken` and `cumulative`.
+   */
+  addTaken(sum: Float64Array<ArrayBuffer>, last: boolean): Float64Array<ArrayBuffer> {
+    const all = sum.length === this.taken.length ? sum : regrown(sum, this.outflows, sum.length / this.outflows, this.capacity);
+    for (let f = 0; f < this.outflows; f++) {
+      const base = f * this.capacity;
+      for (let i = 0; i < this.count; i++) all[base + i] += this.taken[base + i];
+      if (!last) continue;
+      let reached = 0;
+      for (let i = this.count - 1; i >= 0; i--) {
+        this.taken[base + i] = all[base + i];
+        reached += all[base + i];
+        this.cumulative[base + i] = reached;
+      }
+    }
+    return all;
+  }
+
+  /**
    * Drops used-up parcels and merges neighbours whose joint entry interval is at most `resolution` × the age of its younger end.
    * Depth, entered amounts and tracer mass add up exactly; the boundary between them is forgotten.
    */
@@ -89,7 +111,8 @@ export class ColumnState {
         this.followed[i] < 0 &&
         this.followed[last] < 0 &&
         isAssumed === last < assumed &&
-        this.entryEnd[i] - this.entryStart[last] <= resolution * (now - this.entryEnd[i]);
+        this.entryEnd[i] - this.entryStart[last] <= resolution * (now - this.entryEnd[i]) &&
+        this.feeds(last, i) <= LARGEST_MERGED;
       if (joins) this.join(last, i);
       else {
         if (kept !== i) this.move(kept, i);
@@ -99,6 +122,17 @@ export class ColumnState {
     }
     this.count = kept;
     this.assumed = assumed;
+  }
+
+  /** Largest share of an outflow that parcels `older` and `younger` give together. */
+  private feeds(older: number, younger: number): number {
+    let most = 0;
+    for (let f = 0; f < this.outflows; f++) {
+      const base = f * this.capacity;
+      const above = younger + 1 < this.count ? this.lastShare[base + younger + 1] : 0;
+      most = Math.max(most, this.lastShare[base + older] - above);
+    }
+    return most;
   }
 
   /** Adds parcel `younger` to parcel `older`, whose older edge stays. */

@@ -1,12 +1,13 @@
 import type { SelectionEvaluator } from '../selection/index.js';
 import type { ColumnState } from './columnState.js';
 import { StepIntegrator } from './integrator.js';
-import { MidpointPass } from './midpoint.js';
+import { FastPass } from './fastPass.js';
 
 /** Error allowed in the share of the step's outflow taken above any one boundary. */
 export const EXACT_TOLERANCE = 1e-9;
 export const DEFAULT_TOLERANCE = 2e-5;
-const MIDPOINT_TOLERANCE = 4e-5;
+/** Share of a step at most taken at once where a selection has corners, which an error estimate may step over. */
+const CORNERED_PART = 0.125;
 
 /**
  * One step of the whole column: the increasing map of every boundary and what each outflow took above it. Parcels that enter in the
@@ -16,20 +17,19 @@ export class ColumnStep {
   /** [outflows] mm taken from pre-record water in the step. */
   readonly preTaken: Float64Array;
   private readonly integrator: StepIntegrator;
-  private readonly midpoint: MidpointPass | null;
+  private readonly fast: FastPass | null;
   private readonly tolerance: number;
+  private readonly largestPart: number;
   private readonly above: Float64Array;
   private readonly loss: Float64Array;
   private lastInflow = 0;
 
-  constructor(
-    evaluator: SelectionEvaluator,
-    everyAge: boolean,
-  ) {
+  constructor(evaluator: SelectionEvaluator, everyAge: boolean) {
     const count = evaluator.names.length;
     this.integrator = new StepIntegrator(evaluator);
-    this.midpoint = everyAge ? null : MidpointPass.for(evaluator);
+    this.fast = everyAge ? null : FastPass.for(evaluator);
     this.tolerance = everyAge ? EXACT_TOLERANCE : DEFAULT_TOLERANCE;
+    this.largestPart = evaluator.pieces.some((active) => active.curve?.cornered) ? CORNERED_PART : 1;
     this.preTaken = new Float64Array(count);
     this.above = new Float64Array(count);
     this.loss = new Float64Array(count);
@@ -45,38 +45,51 @@ export class ColumnStep {
 
   /**
    * @param state    column at the start of the step; moved to its end
-   * @param firstNew index of the first parcel that enters in the step, `state.count` if none
+   * @param enters   whether the youngest parcel is the inflow of this step
    * @param inflow   mm/day
    * @param flux     [outflows] mm/day
    */
-  advance(state: ColumnState, firstNew: number, inflow: number, flux: Float64Array, days: number): void {
-    const { above, midpoint } = this;
+  advance(state: ColumnState, enters: boolean, inflow: number, flux: Float64Array, days: number): void {
+    const { above, fast } = this;
     const outflows = state.outflows;
     const totalBefore = state.total;
     let out = 0;
     for (let f = 0; f < outflows; f++) out += flux[f];
     const totalAfter = totalBefore + (inflow - out) * days;
     above.fill(0);
-    if (out <= 0) this.fill(state, firstNew, inflow * days);
+    if (out <= 0) this.fill(state, enters ? inflow * days : 0);
     else {
-      this.integrator.setStep(days, inflow, flux, totalBefore, this.tolerance);
-      let edge = 0;
-      const parts = state.count - firstNew;
-      for (let i = state.count - 1; i >= firstNew; i--) {
-        this.integrator.carry(0, (i - firstNew) / parts);
-        this.settle(state, i, (inflow * days) / parts, flux, days);
+      if (fast !== null) {
+        const stretch = Math.abs(totalAfter - totalBefore) / Math.min(totalBefore, totalAfter);
+        fast.setStep(Math.max(inflow, out), Math.max(this.lastInflow, out), flux, days, stretch);
       }
-      let i = firstNew - 1;
+      this.integrator.setStep(days, inflow, flux, totalBefore, this.tolerance, this.largestPart);
+      let edge = 0;
+      let i = state.count - 1;
+      if (enters) {
+        if (fast !== null && inflow > out) {
+          fast.four(0, inflow, flux, days, totalBefore, inflow - out);
+          this.settle(state, i--, inflow * days, flux, days, fast.taken, fast.pair);
+        } else {
+          this.integrator.carry(0);
+          this.settle(state, i--, inflow * days, flux, days, this.integrator.taken, this.integrator.share);
+        }
+      }
       for (; i >= 0; i--) {
         const start = edge + state.depth[i];
-        if (midpoint !== null && this.midpointServes(state, i, start, inflow, flux, days)) break;
+        if (fast !== null && start >= fast.oneFrom) break;
         edge = start;
-        this.integrator.carry(start, 0);
-        this.settle(state, i, 0, flux, days);
+        if (fast !== null && (start >= fast.fourFrom || inflow > out)) {
+          fast.four(start, inflow, flux, days, totalBefore, inflow - out);
+          this.settle(state, i, 0, flux, days, fast.taken, fast.pair);
+        } else {
+          this.integrator.carry(start);
+          this.settle(state, i, 0, flux, days, this.integrator.taken, this.integrator.share);
+        }
       }
       if (i >= 0) {
         const middle = totalBefore + 0.5 * (inflow - out) * days;
-        midpoint!.run(state, i, edge, above[0], outflows > 1 ? above[1] : 0, inflow, flux, days, middle);
+        fast!.run(state, i, edge, above[0], outflows > 1 ? above[1] : 0, inflow, flux, days, middle);
         for (let f = 0; f < outflows; f++) above[f] = state.cumulative[f * state.capacity];
       }
     }
@@ -101,27 +114,26 @@ export class ColumnStep {
     return gone;
   }
 
-  private midpointServes(state: ColumnState, i: number, start: number, inflow: number, flux: Float64Array, days: number): boolean {
-    let drain = 0;
-    for (let f = 0; f < state.outflows; f++) drain += flux[f] * state.lastShare[f * state.capacity + i];
-    const rate = Math.max(Math.abs(inflow - drain), Math.abs(this.lastInflow - drain));
-    return start > 2 * rate * days && this.midpoint!.allows(start, rate, flux, days, MIDPOINT_TOLERANCE);
-  }
-
-  /** Without outflow every parcel keeps its depth and new ones take what falls. */
-  private fill(state: ColumnState, firstNew: number, fallen: number): void {
-    const parts = state.count - firstNew;
+  /** Without outflow every parcel keeps its depth and a new one takes what falls. */
+  private fill(state: ColumnState, fallen: number): void {
     for (let f = 0; f < state.outflows; f++) {
       state.taken.fill(0, f * state.capacity, f * state.capacity + state.count);
       state.cumulative.fill(0, f * state.capacity, f * state.capacity + state.count);
     }
-    for (let i = firstNew; i < state.count; i++) state.depth[i] = fallen / parts;
+    if (fallen > 0) state.depth[state.count - 1] = fallen;
   }
 
-  /** Books what the integrator found for the boundary below parcel i; never more than there is, never less than nothing. */
-  private settle(state: ColumnState, i: number, fallen: number, flux: Float64Array, days: number): void {
+  /** Books what was taken above the boundary below parcel i; never more than there is, never less than nothing. */
+  private settle(
+    state: ColumnState,
+    i: number,
+    fallen: number,
+    flux: Float64Array,
+    days: number,
+    taken: Float64Array,
+    share: Float64Array,
+  ): void {
     const { above, loss } = this;
-    const { taken, share } = this.integrator;
     const { capacity } = state;
     let all = 0;
     for (let f = 0; f < above.length; f++) {

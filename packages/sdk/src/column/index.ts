@@ -84,7 +84,8 @@ export function continueColumn(checkpoint: Checkpoint, forcing: Forcing, options
           {
             code: 'checkpoint-options',
             path: options.spinUp === undefined ? 'options.ageResolution' : 'options.spinUp',
-            expected: options.spinUp === undefined ? `${checkpoint.ageResolution}, as in the run before` : 'no spin-up of a run that goes on',
+            expected:
+              options.spinUp === undefined ? `${checkpoint.ageResolution}, as in the run before` : 'no spin-up of a run that goes on',
             received: options.spinUp === undefined ? String(resolution) : 'one',
           },
         ],

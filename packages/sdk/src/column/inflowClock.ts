@@ -1,8 +1,9 @@
-const FINER_THAN_PARCELS = 8;
+/** Deviation from a straight line that may be forgotten, per mm that entered since: about the share of an outflow that it can misplace. */
+const FORGOTTEN = 1e-4;
 
 /**
- * Cumulative inflow against time, thinned with age eight times more finely than the parcels: it says how the rain was spread within
- * a merged parcel's entry interval, so that an age can be placed inside it. Its length depends on the age range, not on the steps.
+ * Cumulative inflow against time, thinned with age where a straight line serves as well: it says how the rain was spread within a merged
+ * parcel's entry interval, so that an age can be placed inside it. Its length grows with the logarithm of the record's.
  */
 export class InflowClock {
   /** Steps since the record began, increasing. */
@@ -34,12 +35,17 @@ export class InflowClock {
     return times[k] + ((amount - amounts[k]) / rise) * (times[k + 1] - times[k]);
   }
 
-  thin(now: number, resolution: number): void {
+  thin(): void {
     const { times, amounts } = this;
+    const entered = amounts.length > 0 ? amounts[amounts.length - 1] : 0;
     let kept = 0;
     for (let k = 0; k < times.length; k++) {
-      const inner = kept > 0 && k + 1 < times.length;
-      if (inner && times[k + 1] - times[kept - 1] <= (resolution / FINER_THAN_PARCELS) * (now - times[k + 1])) continue;
+      if (kept > 0 && k + 1 < times.length) {
+        const before = kept - 1;
+        const rate = (amounts[k + 1] - amounts[before]) / (times[k + 1] - times[before]);
+        const deviation = Math.abs(amounts[before] + rate * (times[k] - times[before]) - amounts[k]);
+        if (deviation <= FORGOTTEN * (entered - amounts[k])) continue;
+      }
       times[kept] = times[k];
       amounts[kept] = amounts[k];
       kept++;

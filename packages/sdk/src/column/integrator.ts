@@ -17,6 +17,8 @@ const STAGE_COUNT = 7;
 const SMALLEST_PART = 1e-7;
 /** t ∝ s^4 turns the start Ω ~ S^a, S ~ t of a new boundary into a smooth one for every a down to about 0.3. */
 const START_POWER = 4;
+/** Boundaries that start above this share of the step's inflow count as near the surface. */
+const SHALLOW = 0.3;
 
 /**
  * Carries one boundary of the age-ranked storage through one step: dS/dt = J − Σ F_f Ω_f(S, t), with the depth X_f of each outflow
@@ -38,6 +40,7 @@ export class StepIntegrator {
   private total = 0;
   private totalRate = 0;
   private allowed = 0;
+  private largestPart = 1;
   private readonly flux: Float64Array;
 
   constructor(private readonly evaluator: SelectionEvaluator) {
@@ -50,7 +53,7 @@ export class StepIntegrator {
   }
 
   /** Sets what all boundaries of a step share. */
-  setStep(days: number, inflow: number, flux: Float64Array, totalAtStart: number, tolerance: number): void {
+  setStep(days: number, inflow: number, flux: Float64Array, totalAtStart: number, tolerance: number, largestPart: number): void {
     let out = 0;
     for (let f = 0; f < this.count; f++) {
       this.flux[f] = flux[f];
@@ -61,23 +64,22 @@ export class StepIntegrator {
     this.total = totalAtStart;
     this.totalRate = inflow - out;
     this.allowed = tolerance * out * days;
+    this.largestPart = largestPart;
   }
 
   /**
-   * @param start mm, S at the boundary's start
-   * @param entry fraction of the step at which it starts, 0 but for boundaries born within the step
+   * @param start mm, S at the start of the step
    * @returns mm, S at the end of the step; `taken` and `share` hold the rest
    */
-  carry(start: number, entry: number): number {
+  carry(start: number): number {
     const { count, taken, trial, flux, stage, share, inflow, evaluator } = this;
-    const from = entry * this.days;
-    const span = this.days - from;
-    const power = start <= 0 && inflow > 0 ? START_POWER : 1;
+    const span = this.days;
+    const power = inflow > 0 && start < SHALLOW * inflow * span ? START_POWER : 1;
     taken.fill(0);
     let depth = start > 0 ? start : 0;
     let offset = 0; // what S was set to beyond start + J t − ΣX, when it was held at 0
     let s = 0;
-    let part = 1;
+    let part = this.largestPart;
     let fresh = true;
     for (let tries = 0; s < 1 && tries < 10_000; tries++) {
       if (depth <= 0 && this.holdsAtSurface()) {
@@ -85,6 +87,7 @@ export class StepIntegrator {
         depth = 0;
         break;
       }
+      if (part > this.largestPart) part = this.largestPart;
       if (s + part > 1) part = 1 - s;
       for (let k = fresh ? 0 : 1; k < STAGE_COUNT; k++) {
         const place = s + NODES[k] * part;
@@ -98,7 +101,7 @@ export class StepIntegrator {
           trial[f] = taken[f] + part * sum;
           reached -= trial[f];
         }
-        evaluator.evaluate(reached, this.total + this.totalRate * (from + time * span), share);
+        evaluator.evaluate(reached, this.total + this.totalRate * time * span, share);
         for (let f = 0; f < count; f++) stage[k * count + f] = flux[f] * share[f] * speed;
         if (k === STAGE_COUNT - 1) depth = reached;
       }

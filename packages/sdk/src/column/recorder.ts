@@ -108,7 +108,8 @@ export class Recorder {
   }
 
   recordConcentration(k: number, tracer: number, mass: Float64Array, flux: Float64Array): void {
-    for (let f = 0; f < this.concentrations.length; f++) this.concentrations[f][tracer][k] = flux[f] > 0 ? mass[f] / (flux[f] * this.stepDays) : NaN;
+    for (let f = 0; f < this.concentrations.length; f++)
+      this.concentrations[f][tracer][k] = flux[f] > 0 ? mass[f] / (flux[f] * this.stepDays) : NaN;
   }
 
   /** Books the followed parcels; called after `record`. */

@@ -11,9 +11,13 @@ import { parseInstant } from './validate.js';
 export const DEFAULT_AGE_RESOLUTION = 0.05;
 /** Steps between passes that merge parcels and thin the clock; counted from the record's start, so that it never depends on who runs it. */
 const MERGE_EVERY = 8;
-/** A parcel that lost solute unevenly is no longer well mixed, so storm days are cut by the share of an outflow that they would feed. */
-const PARTS_PER_SHARE = { default: 10, everyAge: 40 };
-const MOST_PARTS = { default: 8, everyAge: 32 };
+const THIN_EVERY = 64;
+/**
+ * A parcel that is enriched or reacts is no longer alike within itself. Steps whose inflow feeds a large share of an outflow are cut into
+ * parts for such tracers, so that a storm becomes several parcels: parts per share of the outflow, and at most.
+ */
+const PARTS_PER_SHARE = { default: 12, everyAge: 24 };
+const MOST_PARTS = { default: 6, everyAge: 12 };
 
 /** A run in progress: `advance` any number of steps at a time, then `finish`. The same bits however it is cut. */
 export class ColumnRunner {
@@ -34,7 +38,11 @@ export class ColumnRunner {
   private done = 0;
   private readonly recorder: Recorder;
   private readonly flux: Float64Array;
-  private readonly mass: Float64Array;
+  /** [tracers][outflows] mass that left in the step. */
+  private readonly masses: Float64Array[];
+  private readonly preTaken: Float64Array;
+  private readonly share: Float64Array;
+  private takenBefore = new Float64Array(0);
   private readonly inputs: Float64Array[];
   private readonly fluxes: Float64Array[];
   private readonly reacts: boolean;
@@ -58,9 +66,17 @@ export class ColumnRunner {
     this.step = new ColumnStep(this.evaluator, ageResolution === 0);
     this.clock = ageResolution > 0 ? new InflowClock() : null;
     this.ledgers = this.plans.map(() => new TracerLedger());
-    this.recorder = new Recorder(this.names, tracers.map(([name]) => name), forcing.inflow.length, forcing.stepDays, options);
+    this.recorder = new Recorder(
+      this.names,
+      tracers.map(([name]) => name),
+      forcing.inflow.length,
+      forcing.stepDays,
+      options,
+    );
     this.flux = new Float64Array(this.names.length);
-    this.mass = new Float64Array(this.names.length);
+    this.masses = this.plans.map(() => new Float64Array(this.names.length));
+    this.preTaken = new Float64Array(this.names.length);
+    this.share = new Float64Array(this.names.length);
     this.inputs = this.plans.map((plan) => forcing.inflowConcentration[plan.name]);
     this.fluxes = this.names.map((name) => forcing.outflows[name]);
     this.reacts = this.plans.some((plan) => !plan.conservative);
@@ -90,11 +106,8 @@ export class ColumnRunner {
       const follow = this.recorder.followIndex(k);
       if (follow >= 0) this.recorder.startFollowing(k, this.forcing.inflow[k] * this.forcing.stepDays);
       this.advanceOne(k, time, follow);
-      this.recorder.record(k, time + 1, this.state, this.clock, this.flux, this.step.preTaken);
-      for (let t = 0; t < this.plans.length; t++) {
-        this.moveTracer(t, k);
-        this.recorder.recordConcentration(k, t, this.mass, this.flux);
-      }
+      this.recorder.record(k, time + 1, this.state, this.clock, this.flux, this.preTaken);
+      for (let t = 0; t < this.plans.length; t++) this.recorder.recordConcentration(k, t, this.masses[t], this.flux);
       if (this.recorder.follows.length > 0) this.recorder.recordFollowed(k, this.state);
       this.recorder.recordSnapshot(k, time + 1, this.state, this.evaluator);
       this.tidy(time + 1);
@@ -113,13 +126,9 @@ export class ColumnRunner {
     };
   }
 
-  private firstNew = 0;
-  private newDepth = 0;
-
-  /** Water of one step; during spin-up tracers too. */
+  /** Water and tracers of one step; `state.taken`, `preTaken` and `masses` hold what left in all of it. */
   private advanceOne(k: number, time: number, follow: number): void {
     const { state, forcing, flux, evaluator } = this;
-    const days = forcing.stepDays;
     const inflow = forcing.inflow[k];
     let out = 0;
     for (let f = 0; f < flux.length; f++) {
@@ -127,58 +136,44 @@ export class ColumnRunner {
       out += flux[f];
     }
     this.at = k;
-    this.middleStorage = state.total + 0.5 * (inflow - out) * days;
+    this.middleStorage = state.total + 0.5 * (inflow - out) * forcing.stepDays;
     if (!evaluator.steady) evaluator.setStep(k, this.driver);
-    this.firstNew = state.count;
-    if (inflow > 0) {
-      const parts = this.reacts ? this.partsFor(inflow * days) : 1;
-      const before = this.entered;
-      const after = before + inflow * days;
-      for (let part = 0; part < parts; part++) {
-        const low = part === 0 ? before : before + ((after - before) * part) / parts;
-        const high = part === parts - 1 ? after : before + ((after - before) * (part + 1)) / parts;
-        state.append(time + part / parts, time + (part + 1) / parts, low, high, follow);
+    for (const mass of this.masses) mass.fill(0);
+    this.preTaken.fill(0);
+    const parts = this.reacts && inflow > 0 ? this.partsFor(inflow * forcing.stepDays) : 1;
+    const days = forcing.stepDays / parts;
+    if (parts > 1) this.takenBefore.fill(0);
+    for (let part = 0; part < parts; part++) {
+      if (inflow > 0) {
+        const before = this.entered;
+        this.entered += inflow * days;
+        state.append(time + part / parts, time + (part + 1) / parts, before, this.entered, follow);
+        this.clock?.add(time + part / parts, time + (part + 1) / parts, before, this.entered);
       }
-      this.newDepth = (inflow * days) / parts;
-      this.entered = after;
-      this.clock?.add(time, time + 1, before, after);
+      this.step.advance(state, inflow > 0, inflow, flux, days);
+      const { preTaken } = this.step;
+      for (let t = 0; t < this.plans.length; t++) {
+        moveTracer(state, this.plans[t], t, this.ledgers[t], inflow * days, this.inputs[t][k], days, preTaken, this.masses[t]);
+      }
+      for (let f = 0; f < preTaken.length; f++) this.preTaken[f] += preTaken[f];
+      if (parts > 1) this.takenBefore = state.addTaken(this.takenBefore, part === parts - 1);
     }
     if (state.count > this.most) this.most = state.count;
-    this.step.advance(state, this.firstNew, inflow, flux, days);
-    this.balance.in += inflow * days;
-    this.balance.out += out * days;
-    if (time < 0) {
-      for (let t = 0; t < this.plans.length; t++) this.moveTracer(t, k);
-      this.tidy(time + 1);
-    }
-  }
-
-  private moveTracer(t: number, k: number): void {
-    moveTracer(
-      this.state,
-      this.plans[t],
-      t,
-      this.ledgers[t],
-      this.firstNew,
-      this.newDepth,
-      this.inputs[t][k],
-      this.forcing.stepDays,
-      this.step.preTaken,
-      this.mass,
-    );
+    this.balance.in += inflow * forcing.stepDays;
+    this.balance.out += out * forcing.stepDays;
+    if (time < 0) this.tidy(time + 1);
   }
 
   private tidy(now: number): void {
-    if (now % MERGE_EVERY !== 0) return;
-    this.state.merge(now, this.ageResolution);
-    this.clock?.thin(now, this.ageResolution);
+    if (now % MERGE_EVERY === 0) this.state.merge(now, this.ageResolution);
+    if (now % THIN_EVERY === 0) this.clock?.thin();
   }
 
   private partsFor(depth: number): number {
     const mode = this.ageResolution === 0 ? 'everyAge' : 'default';
-    this.evaluator.evaluate(depth, this.state.total, this.mass);
+    this.evaluator.evaluate(depth, this.state.total, this.share);
     let share = 0;
-    for (let f = 0; f < this.mass.length; f++) if (this.mass[f] > share) share = this.mass[f];
+    for (let f = 0; f < this.share.length; f++) if (this.share[f] > share) share = this.share[f];
     return Math.max(1, Math.min(MOST_PARTS[mode], Math.ceil(PARTS_PER_SHARE[mode] * share)));
   }
 

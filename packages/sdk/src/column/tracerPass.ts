@@ -15,21 +15,19 @@ const profile = new Float64Array(2);
 
 /**
  * Moves one tracer through a step whose water is already moved (`state.taken`, `state.depth`).
- * @param index      which tracer of the state
- * @param firstNew   index of the first parcel that entered in this step
- * @param newDepth   mm of inflow to each such parcel
- * @param inflow     concentration of the inflow (ignored without new parcels)
- * @param days       length of the step
- * @param preTaken   [outflows] mm taken from pre-record water
- * @param out        [outflows] receives the mass that left with each outflow
+ * @param index     which tracer of the state
+ * @param entered   mm of inflow to the youngest parcel, 0 if nothing entered
+ * @param inflow    concentration of the inflow (ignored without inflow)
+ * @param days      length of the step
+ * @param preTaken  [outflows] mm taken from pre-record water
+ * @param out       [outflows] the mass that left with each outflow is added here
  */
 export function moveTracer(
   state: ColumnState,
   plan: TracerPlan,
   index: number,
   ledger: TracerLedger,
-  firstNew: number,
-  newDepth: number,
+  entered: number,
   inflow: number,
   days: number,
   preTaken: Float64Array,
@@ -37,39 +35,42 @@ export function moveTracer(
 ): void {
   const { taken, capacity, count, outflows } = state;
   const concentration = state.concentration.subarray(index * capacity, index * capacity + count);
-  for (let i = firstNew; i < count; i++) concentration[i] = inflow;
-  ledger.entered += (count - firstNew) * newDepth * (count > firstNew ? inflow : 0);
-  for (let f = 0; f < outflows; f++) out[f] = preTaken[f] * plan.carried[f] * plan.preRecord;
-  if (plan.conservative) {
-    for (let f = 0; f < outflows; f++) {
-      const base = f * capacity;
-      let sum = 0;
-      for (let i = 0; i < count; i++) sum += taken[base + i] * concentration[i];
-      out[f] += sum;
-    }
-  } else {
-    for (let f = 0; f < outflows; f++) ledger.held -= (1 - plan.carried[f]) * preTaken[f] * plan.preRecord;
-    react(state, plan, ledger, concentration, firstNew, newDepth, days, out);
+  if (entered > 0) {
+    concentration[count - 1] = inflow;
+    ledger.entered += entered * inflow;
   }
-  for (let f = 0; f < outflows; f++) ledger.left += out[f];
+  for (let f = 0; f < outflows; f++) {
+    const mass = preTaken[f] * plan.carried[f] * plan.preRecord;
+    ledger.left += mass;
+    ledger.held -= preTaken[f] * plan.preRecord - mass;
+    out[f] += mass;
+  }
+  if (!plan.conservative) {
+    react(state, plan, ledger, concentration, entered, days, out);
+    return;
+  }
+  for (let f = 0; f < outflows; f++) {
+    const base = f * capacity;
+    let sum = 0;
+    for (let i = 0; i < count; i++) sum += taken[base + i] * concentration[i];
+    out[f] += sum;
+    ledger.left += sum;
+  }
 }
 
-/** Cut of the entry step into parts, as parcels `firstNew` … `count − 1`; each is moved as if it had entered in the middle of its part. */
 function react(
   state: ColumnState,
   plan: TracerPlan,
   ledger: TracerLedger,
   concentration: Float64Array,
-  firstNew: number,
-  newDepth: number,
+  entered: number,
   days: number,
   out: Float64Array,
 ): void {
   const { taken, depth, capacity, count, outflows } = state;
   const { carried, rate, target } = plan;
-  const parts = count - firstNew;
-  const fullDecay = Math.exp(-rate * days);
-  const fullMeanDecay = meanOfDecay(rate * days);
+  const decay = Math.exp(-rate * days);
+  const meanDecay = meanOfDecay(rate * days);
   for (let i = 0; i < count; i++) {
     let water = 0;
     let withSolute = 0;
@@ -78,7 +79,6 @@ function react(
       water += mm;
       withSolute += carried[f] * mm;
     }
-    const entering = i >= firstNew ? newDepth : 0;
     const after = depth[i];
     const before = after + water;
     const old = concentration[i];
@@ -88,16 +88,13 @@ function react(
       // used up: whatever solute there was leaves with what carries any
       end = old;
       mean = withSolute > 0 ? (before * old) / withSolute : old;
-    } else if (entering > 0 && parts === 1) {
+    } else if (entered > 0 && i === count - 1) {
       const retained = after + withSolute; // J − Σ(1 − a) q, as depths
       const start = (before * old) / retained;
       growingProfile(retained / after, rate * days, profile);
       end = target + (start - target) * profile[0];
       mean = target + (start - target) * profile[1];
     } else {
-      const waited = entering > 0 ? (1 - (i - firstNew + 0.5) / parts) * days : days;
-      const decay = entering > 0 ? Math.exp(-rate * waited) : fullDecay;
-      const meanDecay = entering > 0 ? meanOfDecay(rate * waited) : fullMeanDecay;
       const enriched = old * enrichment(before, after, water > 0 ? 1 - withSolute / water : 0);
       const mixed = withSolute > 0 ? (before * old - after * enriched) / withSolute : old;
       end = rate === 0 ? enriched : target + (enriched - target) * decay;
@@ -110,6 +107,7 @@ function react(
       out[f] += mass;
       left += mass;
     }
+    ledger.left += left;
     const rest = before * old - left - end * after;
     if (after <= 0 && withSolute <= 0) leaveBehind(state, ledger, concentration, i, rest);
     else ledger.reacted += rest;

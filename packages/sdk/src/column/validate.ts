@@ -28,7 +28,12 @@ export function describeForcing(forcing: Forcing): Issue[] {
     });
   }
   if (!(Number.isFinite(forcing.stepDays) && forcing.stepDays > 0)) {
-    issues.push({ code: 'forcing-step', path: 'stepDays', expected: 'a finite number of days above 0', received: shorten(forcing.stepDays) });
+    issues.push({
+      code: 'forcing-step',
+      path: 'stepDays',
+      expected: 'a finite number of days above 0',
+      received: shorten(forcing.stepDays),
+    });
   }
   const steps = isNumberList(forcing.inflow) ? forcing.inflow.length : -1;
   if (steps === 0) issues.push({ code: 'forcing-empty', path: 'inflow', expected: 'at least one step', received: 'none' });
@@ -52,7 +57,11 @@ export function describeForcing(forcing: Forcing): Issue[] {
 }
 
 function isNumberList(list: unknown): list is ArrayLike<number> {
-  return list instanceof Float64Array || list instanceof Float32Array || (Array.isArray(list) && list.every((value) => typeof value === 'number'));
+  return (
+    list instanceof Float64Array ||
+    list instanceof Float32Array ||
+    (Array.isArray(list) && list.every((value) => typeof value === 'number'))
+  );
 }
 
 function describeLength(list: unknown, path: string, steps: number, issues: Issue[]): boolean {
@@ -112,7 +121,12 @@ export function describeCatchment(catchment: Catchment): Issue[] {
 function describeFields(data: object, known: readonly string[], path: string, issues: Issue[]): void {
   for (const key of Object.keys(data)) {
     if (known.includes(key)) continue;
-    issues.push({ code: 'unknown-field', path: path ? `${path}.${key}` : key, expected: `one of ${known.join(', ')}`, received: shorten(key) });
+    issues.push({
+      code: 'unknown-field',
+      path: path ? `${path}.${key}` : key,
+      expected: `one of ${known.join(', ')}`,
+      received: shorten(key),
+    });
   }
 }
 
@@ -207,10 +221,15 @@ export function describeDrivers(evaluator: SelectionEvaluator, forcing: Forcing)
 export function describeOptions(options: RunOptions, steps: number): Issue[] {
   const issues: Issue[] = [];
   describeFields(options, OPTION_FIELDS, 'options', issues);
-  const each = (key: 'youngerThan' | 'quantiles' | 'distributionsAt' | 'snapshotsAt' | 'followInflowOf', good: (value: number) => boolean, words: string): void => {
+  const each = (
+    key: 'youngerThan' | 'quantiles' | 'distributionsAt' | 'snapshotsAt' | 'followInflowOf',
+    good: (value: number) => boolean,
+    words: string,
+  ): void => {
     const list: unknown = options[key];
     if (list === undefined) return;
-    if (!Array.isArray(list)) issues.push({ code: 'option', path: `options.${key}`, expected: `a list of ${words}`, received: shorten(list) });
+    if (!Array.isArray(list))
+      issues.push({ code: 'option', path: `options.${key}`, expected: `a list of ${words}`, received: shorten(list) });
     else
       list.forEach((value, index) => {
         if (typeof value !== 'number' || !good(value))
@@ -226,7 +245,12 @@ export function describeOptions(options: RunOptions, steps: number): Issue[] {
     issues.push({ code: 'option', path: 'options.ageResolution', expected: 'a number from 0 to 0.5', received: shorten(resolution) });
   const repeats = options.spinUp?.repeats;
   if (options.spinUp !== undefined && !(Number.isInteger(repeats) && Number(repeats) >= 0 && Number(repeats) <= 1000))
-    issues.push({ code: 'option', path: 'options.spinUp.repeats', expected: 'a whole number from 0 to 1000', received: shorten(repeats ?? 'nothing') });
+    issues.push({
+      code: 'option',
+      path: 'options.spinUp.repeats',
+      expected: 'a whole number from 0 to 1000',
+      received: shorten(repeats ?? 'nothing'),
+    });
   return issues;
 }
 

@@ -90,7 +90,8 @@ function describeDriven(amount: DrivenAmount, path: string): Issue[] {
     });
   }
   const turn = amount.at.findIndex((place, index) => index > 0 && place <= amount.at[index - 1]);
-  if (turn > 0) issues.push({ code: 'driver-table', path: `${path}.at[${turn}]`, expected: 'places that increase', received: shorten(amount.at) });
+  if (turn > 0)
+    issues.push({ code: 'driver-table', path: `${path}.at[${turn}]`, expected: 'places that increase', received: shorten(amount.at) });
   for (const key of Object.keys(amount)) {
     if (key !== 'driver' && key !== 'at' && key !== 'value') {
       issues.push({ code: 'unknown-field', path: `${path}.${key}`, expected: 'driver, at and value only', received: shorten(key) });

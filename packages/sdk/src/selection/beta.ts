@@ -23,6 +23,10 @@ export const beta: FormDefinition = {
   form: 'beta',
   fields: ['a', 'b'],
   compile: (data, path, amounts, weights) => [
-    piece(weights, { curve: betaCurve, p: amounts.add(data['a'], `${path}.a`, POSITIVE), q: amounts.add(data['b'], `${path}.b`, POSITIVE) }),
+    piece(weights, {
+      curve: betaCurve,
+      p: amounts.add(data['a'], `${path}.a`, POSITIVE),
+      q: amounts.add(data['b'], `${path}.b`, POSITIVE),
+    }),
   ],
 };

@@ -4,6 +4,7 @@ import { AmountTable, drivenValue, inDomain, type DrivenSlot } from './amount.js
 import type { Curve, Piece } from './curve.js';
 import { CurveTable } from './curveTable.js';
 import { compileForm } from './forms.js';
+import { JointTable } from './jointTable.js';
 
 const WEIGHT_TOLERANCE = 1e-9;
 
@@ -34,6 +35,7 @@ export class SelectionEvaluator {
   readonly steady: boolean;
   /** Names of the drivers in use. */
   readonly drivers: readonly string[];
+  private readonly joint: JointTable | null;
   private readonly amounts: AmountTable;
   private readonly mixtures: { outflow: number; name: string }[];
 
@@ -49,8 +51,11 @@ export class SelectionEvaluator {
     this.drivers = [...new Set(this.amounts.driven.map((entry) => entry.amount.driver))];
     this.pieces = compiled.flatMap((list, outflow) => list.map((one) => this.activate(one, outflow)));
     this.youngest = new Float64Array(names.length);
-    this.mixtures = names.map((name, outflow) => ({ name, outflow })).filter((_entry, index) => compiled[index].some((one) => one.weights.length > 0));
+    this.mixtures = names
+      .map((name, outflow) => ({ name, outflow }))
+      .filter((_entry, index) => compiled[index].some((one) => one.weights.length > 0));
     if (this.steady) this.setNumbers(0);
+    this.joint = this.steady ? JointTable.for(this.pieces, names.length) : null;
   }
 
   /** Sets every driven parameter for one step. @throws RillageError `parameter-domain` or `mixture-weights`, naming the step */
@@ -73,6 +78,11 @@ export class SelectionEvaluator {
    * @param out [outflows] shares 0..1
    */
   evaluate(depth: number, total: number, out: Float64Array): void {
+    const { joint } = this;
+    if (joint !== null && depth > joint.shallowest && depth < joint.deepest) {
+      joint.evaluate(depth, total, out);
+      return;
+    }
     for (let f = 0; f < out.length; f++) out[f] = this.youngest[f];
     if (depth <= 0) return;
     for (const active of this.pieces) {
@@ -91,7 +101,8 @@ export class SelectionEvaluator {
     const values = this.amounts.values;
     const curve = piece.curve;
     const shapeFixed = constant(piece.p) && constant(piece.q);
-    const table = curve !== null && curve.costly && shapeFixed ? new CurveTable(curve, values[piece.p], piece.q < 0 ? NaN : values[piece.q]) : null;
+    const table =
+      curve !== null && curve.costly && shapeFixed ? new CurveTable(curve, values[piece.p], piece.q < 0 ? NaN : values[piece.q]) : null;
     const steady = [...piece.weights, piece.scale, piece.from].every(constant) && shapeFixed;
     const overTotal = curve?.over === 'total';
     return { piece, outflow, steady, limit: piece.limit, curve, table, overTotal, weight: 1, inverseScale: 1, from: 0, p: NaN, q: NaN };

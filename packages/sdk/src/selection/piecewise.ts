@@ -49,7 +49,12 @@ function describeTable(storage: unknown, share: unknown, path: string): Issue[] 
   const numbers = (list: unknown, key: string): list is number[] => {
     const good = Array.isArray(list) && list.length >= 2 && list.every((value) => typeof value === 'number' && Number.isFinite(value));
     if (!good)
-      issues.push({ code: 'piecewise-table', path: `${path}.${key}`, expected: 'two or more finite numbers', received: shorten(list ?? 'nothing') });
+      issues.push({
+        code: 'piecewise-table',
+        path: `${path}.${key}`,
+        expected: 'two or more finite numbers',
+        received: shorten(list ?? 'nothing'),
+      });
     return good;
   };
   if (!numbers(storage, 'storage') || !numbers(share, 'share')) return issues;
@@ -63,9 +68,14 @@ function describeTable(storage: unknown, share: unknown, path: string): Issue[] 
     return issues;
   }
   const expect = (good: boolean, key: string, expected: string): void => {
-    if (!good) issues.push({ code: 'piecewise-table', path: `${path}.${key}`, expected, received: shorten(key === 'storage' ? storage : share) });
+    if (!good)
+      issues.push({ code: 'piecewise-table', path: `${path}.${key}`, expected, received: shorten(key === 'storage' ? storage : share) });
   };
-  expect(storage[0] >= 0 && storage.every((value, k) => k === 0 || value > storage[k - 1]), 'storage', 'storages of 0 or more that increase');
+  expect(
+    storage[0] >= 0 && storage.every((value, k) => k === 0 || value > storage[k - 1]),
+    'storage',
+    'storages of 0 or more that increase',
+  );
   expect(share[0] === 0, 'share', 'a first share of 0');
   expect(share[share.length - 1] === 1, 'share', 'a last share of 1');
   expect(

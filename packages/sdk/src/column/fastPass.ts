@@ -1,0 +1,256 @@
+import type { ActivePiece, SelectionEvaluator } from '../selection/index.js';
+import type { ColumnState } from './columnState.js';
+import { describeOutflow, depthOfNode, LAST_NODE, type FastOutflow, INTERVALS } from './fastOutflow.js';
+
+/** Errors allowed in the share of an outflow taken above a boundary in a step, for one look-up and for four. */
+const ONE_TOLERANCE = 3e-4;
+const FOUR_TOLERANCE = 1.5e-4;
+/** Parts into which a step is cut for boundaries near the surface. */
+const SHALLOW_PARTS = 4;
+/** How far the Ω seen at mid-step is extrapolated to the step's end, where the next step begins; below 1, so that errors die out. */
+const AHEAD = 0.8;
+
+/**
+ * The fast pass of the default mode, for one or two outflows whose selections are smooth and unbounded (exponential, gamma, their
+ * mixtures) or uniform over total storage. Deep boundaries take one midpoint step: the depth at mid-step is predicted with the Ω last
+ * seen at that parcel, so that one look-up a step keeps second order. Shallower ones take four look-ups (the classical fourth-order
+ * step); for those above `fourFrom` the adaptive integrator is needed.
+ */
+export class FastPass {
+  /** mm: boundaries at least this deep may take one look-up, four look-ups. */
+  oneFrom = Infinity;
+  fourFrom = Infinity;
+  /** [outflows] mm taken above the boundary last moved by `four`. */
+  readonly taken: Float64Array;
+  /** [2] Ω last looked up: after `four`, at the end of the step. */
+  readonly pair = new Float64Array(2);
+  private readonly table0: Float64Array;
+  private readonly table1: Float64Array;
+  private readonly slope0: number;
+  private readonly slope1: number;
+  private centre0: number;
+  private centre1: number;
+  private readonly shared: boolean;
+  private readonly oneNode: Int32Array;
+  private readonly fourNode: Int32Array;
+
+  private constructor(
+    private readonly outflows: FastOutflow[],
+    private readonly count: number,
+  ) {
+    this.shared = outflows.every((one) => one.scaled === null && one.centre === outflows[0].centre);
+    this.taken = new Float64Array(count);
+    this.table0 = outflows[0].table;
+    this.table1 = outflows[1].table;
+    this.slope0 = outflows[0].slope;
+    this.slope1 = outflows[1].slope;
+    this.centre0 = outflows[0].centre;
+    this.centre1 = outflows[1].centre;
+    this.oneNode = new Int32Array(count);
+    this.fourNode = new Int32Array(count);
+  }
+
+  /** null where the catchment's selections do not suit it. */
+  static for(evaluator: SelectionEvaluator): FastPass | null {
+    const count = evaluator.names.length;
+    if (count > 2) return null;
+    const groups = evaluator.names.map((_name, f) => evaluator.pieces.filter((active) => active.outflow === f));
+    if (!groups.flat().every(isSuited)) return null;
+    const moving = groups.map((group) => group.filter((active) => !active.steady));
+    if (moving.some((list, f) => list.length > 1 || (list.length === 1 && groups[f].length > 1))) return null;
+    const steadyOverDepth = groups.flat().filter((active) => !active.overTotal && active.steady);
+    let logs = 0;
+    for (const active of steadyOverDepth) logs += Math.log(active.curve!.centre(active.p, active.q) / active.inverseScale);
+    const common = steadyOverDepth.length > 0 ? Math.exp(logs / steadyOverDepth.length) : 1;
+    const outflows = groups.map((group, f) => {
+      const scaled = moving[f][0] ?? null;
+      return describeOutflow(group, scaled, scaled === null ? common : scaled.curve!.centre(scaled.p, scaled.q));
+    });
+    if (count === 1) outflows.push(describeOutflow([], null, outflows[0].scaled === null ? outflows[0].centre : common));
+    return new FastPass(outflows, count);
+  }
+
+  /**
+   * Sets `oneFrom` and `fourFrom` for a step, from the errors of the midpoint rule (h²R²/24 · second derivative of Ω), of its predictor,
+   * and of Simpson's rule (h⁴R⁴/2880 · fourth derivative).
+   * @param rate      mm/day, greatest speed R of a boundary in this step
+   * @param lastRate  the same of the step before: the predictor comes from there
+   * @param stretch   relative change of total storage over the step
+   */
+  setStep(rate: number, lastRate: number, flux: Float64Array, days: number, stretch: number): void {
+    const [a, b] = this.outflows;
+    if (a.scaled !== null) this.centre0 = a.centre / a.scaled.inverseScale;
+    if (b.scaled !== null) this.centre1 = b.centre / b.scaled.inverseScale;
+    let out = 0;
+    let uniform = 0;
+    for (let f = 0; f < this.count; f++) {
+      out += flux[f];
+      uniform += (flux[f] * this.outflows[f].slope * stretch * stretch) / 12;
+    }
+    const allowedOne = (ONE_TOLERANCE * out - uniform) / this.count;
+    const allowedFour = (FOUR_TOLERANCE * out - 0.01 * uniform) / this.count;
+    this.oneFrom = allowedOne > 0 ? 0 : Infinity;
+    this.fourFrom = allowedFour > 0 ? 0 : Infinity;
+    for (let f = 0; f < this.count; f++) {
+      const one = this.outflows[f];
+      const inverse = one.scaled === null ? 1 : one.scaled.inverseScale;
+      const reach = (inverse * rate * days) ** 2;
+      const curvature = (flux[f] * reach) / 24;
+      const lag = (1 - AHEAD) * 0.25 * flux[f] * flux[f] * inverse * inverse * days * days * (rate + lastRate);
+      const bend = (flux[f] * reach * reach) / 2880;
+      let node = this.oneNode[f];
+      while (node < LAST_NODE && curvature * one.curvature[node] + lag * one.density[node] * one.density[node] > allowedOne) node++;
+      while (node > 0 && curvature * one.curvature[node - 1] + lag * one.density[node - 1] * one.density[node - 1] <= allowedOne) node--;
+      this.oneNode[f] = node;
+      const oneDepth = node === 0 ? 0 : depthOfNode(node, one.centre) / inverse;
+      if (oneDepth > this.oneFrom) this.oneFrom = oneDepth;
+      node = this.fourNode[f];
+      while (node < LAST_NODE && bend * one.bend[node] > allowedFour) node++;
+      while (node > 0 && bend * one.bend[node - 1] <= allowedFour) node--;
+      this.fourNode[f] = node;
+      const fourDepth = node === 0 ? 0 : depthOfNode(node, one.centre) / inverse;
+      if (fourDepth > this.fourFrom) this.fourFrom = fourDepth;
+    }
+    // a look-up must not stand for a path that begins near the singular start
+    if (this.oneFrom < rate * days) this.oneFrom = rate * days;
+    if (this.fourFrom < 0.5 * rate * days) this.fourFrom = 0.5 * rate * days;
+  }
+
+  /**
+   * Moves one boundary from `start` mm by the classical fourth-order step; `taken` and `share` hold the result. Near the surface the
+   * step is cut into parts of a time s with t = s^4, which takes the singular start Ω ~ S^a, S ~ t out of it.
+   */
+  four(start: number, inflow: number, flux: Float64Array, days: number, totalBefore: number, totalRate: number): void {
+    const { taken, pair } = this;
+    const flux0 = flux[0];
+    const flux1 = this.count > 1 ? flux[1] : 0;
+    const shallow = start < this.fourFrom;
+    const parts = shallow ? SHALLOW_PARTS : 1;
+    const wide = 1 / parts;
+    let x0 = 0;
+    let x1 = 0;
+    for (let part = 0; part < parts; part++) {
+      const s0 = part * wide;
+      const s1 = s0 + 0.5 * wide;
+      const s2 = part === parts - 1 ? 1 : s0 + wide;
+      const t0 = shallow ? s0 * s0 * s0 * s0 * days : 0;
+      const t1 = shallow ? s1 * s1 * s1 * s1 * days : 0.5 * days;
+      const t2 = shallow ? s2 * s2 * s2 * s2 * days : days;
+      const v0 = shallow ? 4 * s0 * s0 * s0 * days * wide : days;
+      const v1 = shallow ? 4 * s1 * s1 * s1 * days * wide : days;
+      const v2 = shallow ? 4 * s2 * s2 * s2 * days * wide : days;
+      const middle = 1 / (totalBefore + totalRate * t1);
+      const end = 1 / (totalBefore + totalRate * t2);
+      const from = start - x0 - x1;
+      this.look(from + inflow * t0, 1 / (totalBefore + totalRate * t0));
+      const a0 = flux0 * pair[0] * v0;
+      const a1 = flux1 * pair[1] * v0;
+      this.look(from + inflow * t1 - 0.5 * (a0 + a1), middle);
+      const b0 = flux0 * pair[0] * v1;
+      const b1 = flux1 * pair[1] * v1;
+      this.look(from + inflow * t1 - 0.5 * (b0 + b1), middle);
+      const c0 = flux0 * pair[0] * v1;
+      const c1 = flux1 * pair[1] * v1;
+      this.look(from + inflow * t2 - c0 - c1, end);
+      x0 += (a0 + 2 * (b0 + c0) + flux0 * pair[0] * v2) / 6;
+      x1 += (a1 + 2 * (b1 + c1) + flux1 * pair[1] * v2) / 6;
+    }
+    taken[0] = x0;
+    if (this.count > 1) taken[1] = x1;
+  }
+
+  /** Ω of both outflows at one depth, into `pair`. */
+  private look(depth: number, inverseTotal: number): void {
+    const { pair, table0, table1, centre0, centre1 } = this;
+    const at = depth > 0 ? depth : 0;
+    const root0 = Math.sqrt(at / (at + centre0)) * INTERVALS;
+    const k0 = root0 | 0;
+    const share0 = table0[2 * k0] + (root0 - k0) * table0[2 * k0 + 1] + this.slope0 * at * inverseTotal;
+    const root1 = this.shared ? root0 : Math.sqrt(at / (at + centre1)) * INTERVALS;
+    const k1 = root1 | 0;
+    const share1 = table1[2 * k1] + (root1 - k1) * table1[2 * k1 + 1] + this.slope1 * at * inverseTotal;
+    pair[0] = share0 < 1 ? share0 : 1;
+    pair[1] = share1 < 1 ? share1 : 1;
+  }
+
+  /**
+   * Moves parcels `from` … 0 through the step. `depthAbove` and `above` are the depth and the amounts taken above parcel `from`.
+   * Returns nothing; `state.depth`, `taken`, `cumulative` and `lastShare` hold the result. Where a parcel would lose more than it
+   * has, or less than nothing, its loss is cut and the rest falls to the next older one.
+   */
+  run(
+    state: ColumnState,
+    from: number,
+    depthAbove: number,
+    above0: number,
+    above1: number,
+    inflow: number,
+    flux: Float64Array,
+    days: number,
+    totalAtMiddle: number,
+  ): void {
+    const { depth, capacity, taken, cumulative, lastShare } = state;
+    const { table0, table1, centre0, centre1, shared } = this;
+    const flux0 = flux[0];
+    const flux1 = this.count > 1 ? flux[1] : 0;
+    const second = this.count > 1 ? capacity : 0;
+    const out0 = flux0 * days;
+    const out1 = flux1 * days;
+    const half = 0.5 * days;
+    const push = half * inflow;
+    const pull0 = half * flux0;
+    const pull1 = half * flux1;
+    const slope0 = this.slope0 / totalAtMiddle;
+    const slope1 = this.slope1 / totalAtMiddle;
+    let edge = depthAbove;
+    let x0 = above0;
+    let x1 = above1;
+    for (let i = from; i >= 0; i--) {
+      const mm = depth[i];
+      edge += mm;
+      let middle = edge + push - pull0 * lastShare[i];
+      if (second !== 0) middle -= pull1 * lastShare[second + i];
+      const root0 = Math.sqrt(middle / (middle + centre0)) * INTERVALS;
+      const k0 = root0 | 0;
+      const share0 = table0[2 * k0] + (root0 - k0) * table0[2 * k0 + 1] + slope0 * middle;
+      const target0 = out0 * (share0 < 1 ? share0 : 1);
+      lastShare[i] = share0 + AHEAD * (share0 - lastShare[i]);
+      let loss0 = target0 - x0;
+      let loss1 = 0;
+      if (second !== 0) {
+        const root1 = shared ? root0 : Math.sqrt(middle / (middle + centre1)) * INTERVALS;
+        const k1 = root1 | 0;
+        const share1 = table1[2 * k1] + (root1 - k1) * table1[2 * k1 + 1] + slope1 * middle;
+        lastShare[second + i] = share1 + AHEAD * (share1 - lastShare[second + i]);
+        loss1 = out1 * (share1 < 1 ? share1 : 1) - x1;
+      }
+      let rest = mm - loss0 - loss1;
+      if (loss0 < 0 || loss1 < 0 || rest < 0) {
+        if (loss0 < 0) loss0 = 0;
+        if (loss1 < 0) loss1 = 0;
+        const all = loss0 + loss1;
+        if (all > mm) {
+          loss0 *= mm / all;
+          loss1 *= mm / all;
+          rest = 0;
+        } else rest = mm - all;
+      }
+      x0 += loss0;
+      depth[i] = rest;
+      taken[i] = loss0;
+      cumulative[i] = x0;
+      if (second !== 0) {
+        x1 += loss1;
+        taken[second + i] = loss1;
+        cumulative[second + i] = x1;
+      }
+    }
+  }
+}
+
+function isSuited(active: ActivePiece): boolean {
+  if (active.limit !== null || active.curve === null || active.curve.cornered) return false;
+  if (active.curve.name === 'uniform') return active.steady;
+  if (active.overTotal) return false;
+  return active.steady || active.piece.weights.length === 0 ? active.table !== null || !active.curve.costly : false;
+}
