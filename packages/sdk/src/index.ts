@@ -1,2 +1,19 @@
 export * from './contract.js';
 export { RillageError, describeIssue, type Issue } from './errors.js';
+
+export { runColumn, resumeColumn } from './column/index.js';
+export { FORM_NAMES, selectionShare } from './selection/index.js';
+
+export * from './reading/index.js';
+
+export { readForcing, readSampleFiles, type ForcingRead } from './forcing/readForcing.js';
+export { rerunReceipt } from './forcing/rerunReceipt.js';
+export { checkForcing } from './forcing/checkForcing.js';
+export type * from './forcing/layout.js';
+export { fillRainConcentration, type RainFill, type RainFillOptions } from './forcing/rain/fillRainConcentration.js';
+export { degreeDaySnow, type SnowInput, type SnowRun } from './forcing/complete/degreeDaySnow.js';
+export { hargreaves } from './forcing/complete/hargreaves.js';
+export { penmanMonteith, type WeatherDay } from './forcing/complete/penmanMonteith.js';
+export { extraterrestrialRadiation } from './forcing/complete/radiation.js';
+export { limitByStorage, type RootZone } from './forcing/complete/limitByStorage.js';
+export { waterBalance, type WaterBalance } from './forcing/complete/waterBalance.js';
