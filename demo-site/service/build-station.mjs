@@ -13,7 +13,8 @@ const publicFolder = new URL('../public/data/', import.meta.url);
 export async function buildStation() {
   const texts = await Promise.all(recordFiles.map(async (name) => ({ name, text: await readFile(new URL(name, dataFolder)) })));
   const { forcing, findings, receipt, samples } = readForcing(texts, recordLayout);
-  const stream = samples.filter((sample) => sample.of !== 'precipitation');
+  // Three tracers from one bottle are one sample.
+  const bottles = [...new Set(samples.filter((sample) => sample.of === 'discharge').map((sample) => sample.to))].sort();
   const run = runColumn(catchment, forcing, { ...READING_RUN_OPTIONS, distributionsAt: [forcing.inflow.length - 1] });
   const made = makeStation({
     ...station,
@@ -21,14 +22,7 @@ export async function buildStation() {
     source: run,
     receipt,
     language: 'en-GB',
-    samples: {
-      count: stream.length,
-      last:
-        stream
-          .map((sample) => sample.to)
-          .sort()
-          .at(-1) ?? null,
-    },
+    samples: { count: bottles.length, last: bottles.at(-1) ?? null },
   });
   return { station: made, findings, run, forcing };
 }

@@ -4,7 +4,7 @@
  */
 const daily = { columns: [1], writtenAs: 'iso', zone: 'UTC' };
 const grid = { stepDays: 1, dayBegins: '00:00', zone: 'UTC' };
-const evapotranspiration = { method: 'hargreaves', as: 'evapotranspiration', factor: 0.74 };
+const evapotranspiration = { method: 'hargreaves', as: 'evapotranspiration', factor: 0.66 };
 const isotope = { holds: 'rainTracer', unit: 'permil', standsFor: 'bulk' };
 const gaps = [
   { of: 'precipitation', fill: 'zero', upToSteps: 1 },
@@ -123,12 +123,12 @@ export const rainUntilSampled = { d18O: -8.62, d2H: -59, chloride: 2.62 };
 export const catchment = {
   initialStorage: 2200,
   selection: {
-    discharge: { form: 'gamma', shape: 0.6, scale: { driver: 'storageAnomaly', at: [-80, 120], value: [1100, 450] } },
+    discharge: { form: 'gamma', shape: 0.6, scale: { driver: 'storageAnomaly', at: [-150, 40], value: [1100, 450] } },
     evapotranspiration: { form: 'exponential', scale: 110 },
   },
   tracers: {
     d18O: { preRecord: -8.1 },
     d2H: { preRecord: -54.8 },
-    chloride: { preRecord: 5.2, carriedShare: { evapotranspiration: 0 } },
+    chloride: { preRecord: 5, carriedShare: { evapotranspiration: 0 } },
   },
 };
