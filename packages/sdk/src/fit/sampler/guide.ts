@@ -13,6 +13,8 @@ export interface GuidePart {
   mean: number[];
   /** Lower triangle L of scale = L Lᵀ, by rows. */
   root: number[][];
+  /** L⁻¹, likewise. */
+  inverse: number[][];
   /** log density at the mean, weight included, up to a constant of the number of dimensions. */
   logHeight: number;
 }
@@ -38,15 +40,14 @@ export function guideLogDensity(guide: Guide, point: readonly number[]): number 
 }
 
 /** log of a part's weighted density, up to the same constant. */
-export function partLogDensity({ mean, root, degrees, logHeight }: GuidePart, point: readonly number[]): number {
+export function partLogDensity({ mean, inverse, degrees, logHeight }: GuidePart, point: readonly number[]): number {
   const dimensions = mean.length;
-  const solved = new Float64Array(dimensions);
   let distance = 0;
   for (let j = 0; j < dimensions; j++) {
-    let rest = point[j] - mean[j];
-    for (let k = 0; k < j; k++) rest -= root[j][k] * solved[k];
-    solved[j] = rest / root[j][j];
-    distance += solved[j] * solved[j];
+    const row = inverse[j];
+    let score = 0;
+    for (let k = 0; k <= j; k++) score += row[k] * (point[k] - mean[k]);
+    distance += score * score;
   }
   return logHeight - ((degrees + dimensions) / 2) * Math.log1p(distance / degrees);
 }
@@ -56,5 +57,17 @@ export function guidePart(weight: number, degrees: number, mean: number[], root:
   const dimensions = mean.length;
   const logDeterminant = root.reduce((sum, row, j) => sum + Math.log(row[j]), 0);
   const tails = logGamma((degrees + dimensions) / 2) - logGamma(degrees / 2) - (dimensions / 2) * Math.log(degrees);
-  return { weight, degrees, mean, root, logHeight: Math.log(weight) + tails - logDeterminant };
+  return { weight, degrees, mean, root, inverse: inverted(root), logHeight: Math.log(weight) + tails - logDeterminant };
+}
+
+function inverted(root: readonly number[][]): number[][] {
+  const inverse = root.map((row) => row.map(() => 0));
+  for (let j = 0; j < root.length; j++) {
+    for (let k = 0; k <= j; k++) {
+      let sum = j === k ? 1 : 0;
+      for (let i = k; i < j; i++) sum -= root[j][i] * inverse[i][k];
+      inverse[j][k] = sum / root[j][j];
+    }
+  }
+  return inverse;
 }

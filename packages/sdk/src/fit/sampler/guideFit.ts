@@ -72,9 +72,13 @@ function fitMixture(points: Points, parts: number): Guide | null {
 }
 
 function responsibilitiesOf(points: Points, mixture: readonly GuidePart[]): number[][] {
-  const logs = points.map((point) => mixture.map((part) => partLogDensity(part, point)));
-  const totals = logs.map(logSumExp);
-  return mixture.map((_, k) => points.map((__, i) => Math.exp(logs[i][k] - totals[i])));
+  const shares = mixture.map(() => new Array<number>(points.length));
+  points.forEach((point, i) => {
+    const logs = mixture.map((part) => partLogDensity(part, point));
+    const total = logSumExp(logs);
+    for (let k = 0; k < logs.length; k++) shares[k][i] = Math.exp(logs[k] - total);
+  });
+  return shares;
 }
 
 interface Moments {
@@ -83,21 +87,23 @@ interface Moments {
   covariance: number[][];
 }
 
-function momentsOf(points: Points, weights: readonly number[]): Moments | null {
+function momentsOf(points: Points, weights: ArrayLike<number>): Moments | null {
   const dimensions = points[0].length;
-  const total = weights.reduce((a, b) => a + b, 0);
+  let total = 0;
+  for (let i = 0; i < points.length; i++) total += weights[i];
   if (!(total > 0)) return null;
   const mean = new Array<number>(dimensions).fill(0);
-  points.forEach((point, i) => {
-    for (let j = 0; j < dimensions; j++) mean[j] += (weights[i] * point[j]) / total;
-  });
+  for (let i = 0; i < points.length; i++) {
+    for (let j = 0; j < dimensions; j++) mean[j] += (weights[i] * points[i][j]) / total;
+  }
   const covariance = mean.map(() => new Array<number>(dimensions).fill(0));
-  points.forEach((point, i) => {
+  for (let i = 0; i < points.length; i++) {
+    const point = points[i];
     for (let j = 0; j < dimensions; j++) {
       const share = (weights[i] * (point[j] - mean[j])) / total;
       for (let k = 0; k <= j; k++) covariance[j][k] += share * (point[k] - mean[k]);
     }
-  });
+  }
   return { total, mean, covariance };
 }
 
