@@ -17,3 +17,4 @@ export { penmanMonteith, type WeatherDay } from './forcing/complete/penmanMontei
 export { extraterrestrialRadiation } from './forcing/complete/radiation.js';
 export { limitByStorage, type RootZone } from './forcing/complete/limitByStorage.js';
 export { waterBalance, type WaterBalance } from './forcing/complete/waterBalance.js';
+export { runColumnInBackground, type BackgroundOptions } from './workers/runColumnInBackground.js';

@@ -1,0 +1,2 @@
+/** Every task beyond `column`, registered by being imported. */
+export {};
