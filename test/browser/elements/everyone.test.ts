@@ -3,7 +3,7 @@ import 'axe-core/axe.min.js';
 import { expect } from 'chai';
 import type { RillageAgePlot, RillageReading, RillageStation } from '../../../packages/elements/src/index.js';
 import '../../../packages/elements/src/index.js';
-import { clear, mount, parts, pause, settled, shown, until } from './help.js';
+import { clear, mount, parts, pause, settled, shown, stage, until } from './help.js';
 
 interface Axe {
   run(context: unknown, options: unknown): Promise<{ violations: { id: string; nodes: { target: unknown; failureSummary?: string }[] }[] }>;
@@ -37,6 +37,8 @@ async function trio(): Promise<Trio> {
 
 const emulate = (payload?: { media?: string; features?: { name: string; value: string }[] }): Promise<unknown> =>
   executeServerCommand('emulate', payload);
+/** Where the driver cannot resize the window, the stage's own width is what the test holds things to. */
+const resize = (width: number): Promise<void> => setViewport({ width, height: 800 }).catch(() => {});
 /** Emulation is Chromium's own; in other engines the same assertions run on the page as it is. */
 const feature = (name: string, value: string): Promise<unknown> => emulate({ features: [{ name, value }] });
 
@@ -50,7 +52,7 @@ describe('for everyone', () => {
     document.querySelector('#scheme')?.remove();
     document.documentElement.style.removeProperty('font-size');
     await emulate();
-    await setViewport({ width: 800, height: 600 });
+    await resize(800);
     clear();
   });
 
@@ -109,13 +111,15 @@ describe('for everyone', () => {
   ] as const) {
     for (const lang of ['en', 'de', 'ar']) {
       it(`nothing is cut or scrolls sideways at ${width} px with text at ${size}, in ${lang}`, async () => {
-        await setViewport({ width, height: 800 });
+        await resize(width);
+        (stage() as HTMLElement).style.inlineSize = `${width - 16}px`;
         document.documentElement.lang = lang;
         document.documentElement.dir = lang === 'ar' ? 'rtl' : 'ltr';
         document.documentElement.style.fontSize = size;
         const { reading, plot } = await trio();
         await pause(100);
-        expect(document.documentElement.scrollWidth).to.be.at.most(document.documentElement.clientWidth);
+        expect(stage().scrollWidth).to.be.at.most(width - 16);
+        if (innerWidth === width) expect(document.documentElement.scrollWidth).to.be.at.most(document.documentElement.clientWidth);
         for (const element of [reading, plot]) {
           expect(element.scrollWidth, element.localName).to.be.at.most(Math.ceil(element.getBoundingClientRect().width) + 1);
         }

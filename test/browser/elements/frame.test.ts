@@ -1,4 +1,3 @@
-import { expect } from 'chai';
 import { fixture, until } from './help.js';
 
 /** A page of its own in a sandboxed frame: an origin like no other, where storage throws and the network refuses. */

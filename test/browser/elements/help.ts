@@ -46,7 +46,11 @@ export function clear(): void {
 export async function settled(...elements: Element[]): Promise<void> {
   for (const element of elements) await (element as LitElement).updateComplete;
   await pause(0);
-  for (const element of elements) await (element as LitElement).updateComplete;
+  for (const element of elements) {
+    await (element as LitElement).updateComplete;
+    await until(() => !element.shadowRoot?.querySelector('[aria-busy="true"]'), 'every part has come');
+    await (element as LitElement).updateComplete;
+  }
 }
 
 export const pause = (milliseconds: number): Promise<void> => new Promise((done) => setTimeout(done, milliseconds));

@@ -179,6 +179,12 @@ describe('rillage-reading: what comes from outside', () => {
     expect(element.shadowRoot!.textContent).not.to.match(/[\u202A-\u202E\u2066-\u2069]|\0/);
   });
 
+  it('refuses a word it does not know where it chooses by one', async () => {
+    const { reading } = await parts();
+    const element = await mount('rillage-reading', { reading: { ...reading, confidence: '__proto__' as Reading['confidence'] } });
+    expect(shown(element)).to.equal('');
+  });
+
   it('cuts text of any length', async () => {
     const { reading } = await parts();
     Object.assign(reading, { sentence: 'x'.repeat(1_000_000), sentences: ['x'.repeat(1_000_000)], caution: 'y'.repeat(1_000_000) });

@@ -82,7 +82,6 @@ export const messages: Messages = {
   'reading.confidenceNotAssessed': 'لم يُقدَّر: تشغيل واحد للنموذج لم يُختبر بالعينات، فلا يمكن إعطاء مدى.',
   'reading.evidence': 'على ماذا يستند',
   'reading.record': 'السجل',
-  'reading.recordSpan': '{from} إلى {to}',
   'reading.samples': 'العينات',
   'reading.samplesLast': 'عدد عينات المياه {count}، آخرها في {date}',
   'reading.samplesNone': 'لم تُستعمل عينات',

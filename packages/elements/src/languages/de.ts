@@ -78,7 +78,6 @@ export const messages: Messages = {
     'Nicht bestimmt: ein einzelner Modelllauf, nicht an Proben geprüft; ein Bereich lässt sich nicht angeben.',
   'reading.evidence': 'Worauf es beruht',
   'reading.record': 'Aufzeichnung',
-  'reading.recordSpan': '{from} bis {to}',
   'reading.samples': 'Proben',
   'reading.samplesLast': { one: '{count} Wasserprobe, vom {date}', other: '{count} Wasserproben, die letzte vom {date}' },
   'reading.samplesNone': 'keine verwendet',

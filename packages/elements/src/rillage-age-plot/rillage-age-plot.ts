@@ -6,7 +6,7 @@ import { chartFrame, frameStyles } from '../shared/chart-frame.js';
 import { Cursor } from '../shared/cursor.js';
 import { DataTable, tableStyles } from '../shared/data-table.js';
 import { moment, number, percent, percentSpan } from '../shared/format.js';
-import { inkStyles } from '../shared/hatch.js';
+import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
 import { StationLink } from '../shared/station-link.js';

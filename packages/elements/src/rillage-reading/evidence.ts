@@ -1,16 +1,14 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { Reading } from '@rillage/sdk';
 import { age, date, number, percent } from '../shared/format.js';
-import type { Language } from '../shared/language.js';
 import { cleanText } from '../shared/text.js';
-import type { ReadingKey } from './messages.js';
+import type { DetailsSpeech } from './details.js';
 import { headline } from './headline.js';
 
-type Speech = Language<ReadingKey>;
 type Part = TemplateResult | typeof nothing;
 
 /** Against the same season of earlier years, where the history reaches that far. */
-export function trend(speech: Speech, reading: Reading): Part {
+export function trend(speech: DetailsSpeech, reading: Reading): Part {
   const { trend: it } = reading;
   const now = it && headline(reading, it.days);
   if (!it || !now || now.share === null || reading.status === 'withheld') return nothing;
@@ -25,7 +23,7 @@ export function trend(speech: Speech, reading: Reading): Part {
 }
 
 /** How sure, and the rules that led there. */
-export function confidence(speech: Speech, reading: Reading): TemplateResult {
+export function confidence(speech: DetailsSpeech, reading: Reading): TemplateResult {
   const key = words[reading.confidence] ?? words.notAssessed;
   return html`<div part="confidence" class="pair">
     <p class="head">${speech.say('reading.confidence')}</p>
@@ -43,7 +41,7 @@ export function confidence(speech: Speech, reading: Reading): TemplateResult {
 }
 
 /** Record, samples, method and sources, so that a number can be traced. */
-export function evidence(speech: Speech, { evidence: it }: Reading, timeZone: string): TemplateResult {
+export function evidence(speech: DetailsSpeech, { evidence: it }: Reading, timeZone: string): TemplateResult {
   const day = (instant: string): string => date(speech.tag, instant, { dateStyle: 'long' }, timeZone);
   // The record ends at the first instant of the next day.
   const to = day(new Date(Date.parse(it.recordTo) - 1).toISOString());
@@ -59,7 +57,7 @@ export function evidence(speech: Speech, { evidence: it }: Reading, timeZone: st
     <dl>
       <div>
         <dt>${speech.say('reading.record')}</dt>
-        <dd>${speech.say('reading.recordSpan', { from: day(it.recordFrom), to })}</dd>
+        <dd>${speech.say('amount.span', { low: day(it.recordFrom), high: to })}</dd>
       </div>
       <div>
         <dt>${speech.say('reading.samples')}</dt>

@@ -1,12 +1,11 @@
 import { html, type TemplateResult } from 'lit';
 import type { Reading } from '@rillage/sdk';
 import { age, ageSpan, olderThan, percent, percentSpan } from '../shared/format.js';
-import type { Language } from '../shared/language.js';
-import type { ReadingKey } from './messages.js';
+import type { DetailsSpeech } from './details.js';
 import { strip, type Strip } from './strip.js';
 
 /** The numbers behind the sentence as a table: each share with its range in figures and drawn. */
-export function numbers(speech: Language<ReadingKey>, reading: Reading): TemplateResult {
+export function numbers(speech: DetailsSpeech, reading: Reading): TemplateResult {
   return html`<table part="table">
     <caption class="unseen">
       ${speech.say('reading.table')}
@@ -24,14 +23,14 @@ export function numbers(speech: Language<ReadingKey>, reading: Reading): Templat
   </table>`;
 }
 
-function share(speech: Language<ReadingKey>, { days, share: value, unplaced, range }: Reading['younger'][number]): TemplateResult {
+function share(speech: DetailsSpeech, { days, share: value, unplaced, range }: Reading['younger'][number]): TemplateResult {
   const text = percent(speech, value);
   const drawn: Strip | null = value === null ? null : { share: value, unplaced, range, days };
   const amount = value !== null && unplaced > 0.005 ? speech.say('reading.atLeast', { share: text }) : text;
   return row(speech.say('reading.within', { age: age(speech, days) }), amount, percentSpan(speech, range), drawn);
 }
 
-function older(speech: Language<ReadingKey>, { olderThanRecord: { share: value, range } }: Reading): TemplateResult {
+function older(speech: DetailsSpeech, { olderThanRecord: { share: value, range } }: Reading): TemplateResult {
   return row(
     speech.say('reading.olderRow'),
     percent(speech, value),
@@ -40,7 +39,7 @@ function older(speech: Language<ReadingKey>, { olderThanRecord: { share: value, 
   );
 }
 
-function median(speech: Language<ReadingKey>, { median: it }: Reading): TemplateResult {
+function median(speech: DetailsSpeech, { median: it }: Reading): TemplateResult {
   const label = speech.say('reading.medianRow');
   if (!it) return row(label, speech.say('amount.unknown'), speech.say('amount.unassessed'), null);
   const value = it.beyondRecord ? olderThan(speech, it.days) : age(speech, it.days);

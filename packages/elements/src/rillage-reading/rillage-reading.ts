@@ -2,18 +2,17 @@ import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { Reading } from '@rillage/sdk';
 import { asReading } from '../shared/check/reading.js';
 import { moment } from '../shared/format.js';
-import { inkStyles } from '../shared/hatch.js';
+import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
+import { later } from '../shared/later.js';
 import type { Messages } from '../shared/messages.js';
 import { StationLink } from '../shared/station-link.js';
 import { cleanText } from '../shared/text.js';
 import { theme } from '../shared/theme.js';
 import { version } from '../version.js';
-import { confidence, evidence, trend } from './evidence.js';
 import { readingMessages } from './messages.js';
-import { numbers } from './numbers.js';
 import { statement } from './sentence.js';
-import { stripStyles } from './strip.js';
+import { stripStyles } from './strip-styles.js';
 import { readingStyles } from './styles.js';
 
 /**
@@ -90,10 +89,16 @@ export class RillageReading extends LitElement {
     if (!reading) return html`<slot></slot>`;
     const language = this.#language;
     const view = this.reading ? null : this.#link.view;
-    const said = statement(language, reading, this.youngerThan || 30, this.timeZone, () => this.requestUpdate());
+    const said = statement(language, reading, this.youngerThan || 30, this.timeZone, this.#came);
     const name = cleanText(this.#link.view?.station?.name ?? reading.station?.name, 120);
     const full = this.form !== 'compact';
-    return html`<article class=${classes(full, view?.stale)} lang=${language.tag} dir=${language.direction}>
+    const part = full ? detailing(this.#came) : null;
+    return html`<article
+      aria-busy=${said.coming || part === undefined}
+      class=${classes(full, view?.stale)}
+      lang=${language.tag}
+      dir=${language.direction}
+    >
       ${name ? html`<p part="name" class="name"><bdi>${name}</bdi></p>` : nothing}
       ${reading.station?.invented || view?.station?.invented ? html`<p class="invented">${language.say('reading.invented')}</p>` : nothing}
       <p part="sentence" class="sentence" lang=${said.language} dir="auto">${said.lead}</p>
@@ -101,18 +106,14 @@ export class RillageReading extends LitElement {
       <p part="date" class="date">
         ${this.#date(reading)}${view?.stale ? html` · <strong>${language.say('reading.old')}</strong>` : nothing}${view?.offline ? html` · <strong>${language.say('reading.kept')}</strong>` : nothing}
       </p>
-      ${full ? this.#details(reading) : nothing}
+      ${part ? part.details(language, reading, this.timeZone) : nothing}
       <p part="caution" class="caution">
         ${(language.speaks(reading.language) && cleanText(reading.caution, 600)) || language.say('reading.caution')}
       </p>
     </article>`;
   }
 
-  #details(reading: Reading): TemplateResult {
-    const language = this.#language;
-    return html`${trend(language, reading)} ${reading.status === 'given' ? numbers(language, reading) : nothing}
-    ${confidence(language, reading)} ${evidence(language, reading, this.timeZone)}`;
-  }
+  #came = (): void => this.requestUpdate();
 
   #date(reading: Reading): TemplateResult {
     const language = this.#language;
@@ -122,6 +123,8 @@ export class RillageReading extends LitElement {
     >`;
   }
 }
+
+const detailing = later(() => import('./details.js'));
 
 const classes = (full: boolean, stale: boolean | undefined): string => `${full ? 'full' : 'compact'}${stale ? ' old' : ''}`;
 

@@ -1,4 +1,4 @@
-import { css, nothing, svg, type TemplateResult } from 'lit';
+import { nothing, svg, type TemplateResult } from 'lit';
 import { ageClass } from '../shared/age-ramp.js';
 import { hatchPath } from '../shared/hatch.js';
 
@@ -35,32 +35,3 @@ const bar = (low: number, high: number, kind: string): TemplateResult =>
 
 const hatched = (low: number, high: number, kind: string): TemplateResult => svg`${bar(low, high, `ground ${kind}`)}
   <svg x=${percent(low)} width=${width(low, high)} y="1" height="10"><path class="hatch" d=${strokes} /></svg>`;
-
-export const stripStyles = css`
-  .strip {
-    display: block;
-    inline-size: 100%;
-    block-size: 12px;
-    margin-block: 0.3em 0.15em;
-    overflow: visible;
-  }
-  [dir='rtl'] .strip {
-    transform: scaleX(-1);
-  }
-  .strip .axis {
-    stroke: var(--_hairline);
-  }
-  .strip .point {
-    stroke: var(--_ink);
-    stroke-width: 2;
-  }
-  .strip rect {
-    stroke: var(--_ink);
-  }
-  .strip .ground {
-    fill: var(--_paper);
-  }
-  .strip .unplaced {
-    stroke-dasharray: 2 2;
-  }
-`;

@@ -25,7 +25,7 @@ export const readingCheck: Check = fields({
   stepDays: positive,
   status: oneOf('given', 'withheld'),
   withheld: listOf(fields({ code: text })),
-  confidence: text,
+  confidence: oneOf('firm', 'tentative', 'withheld', 'notAssessed'),
   confidenceBecause: listOf(text),
   younger: listOf(fields({ days: positive, share: orNull(share), unplaced: share, range: rangeOf(share) })),
   median: orNull(fields({ days: amount, beyondRecord: flag, range: rangeOf(amount) })),
