@@ -18,6 +18,8 @@ const looks = {
   'phone-320': { width: 320 },
   forced: { width: 900, features: forced },
   'forced-dark': { width: 900, features: [...forced, ...dark] },
+  'reading-360': { width: 360, only: 'rillage-reading' },
+  'reading-320-arabic': { width: 320, lang: 'ar', only: 'rillage-reading' },
   'plot-320': { width: 320, only: 'rillage-age-plot' },
   'plot-arabic': { width: 700, lang: 'ar', only: 'rillage-age-plot' },
   'plot-forced': { width: 700, features: forced, only: 'rillage-age-plot' },
