@@ -24,6 +24,7 @@ test('meanOfDecay(x) is (1 − e^(−x)) / x, also at 0', () => {
 });
 
 describe('enrichment(before, after, kept) is (before / after)^kept', () => {
+  // the rational form errs by k(1 − k²)x³/12 where the share x = 0.08 at most is taken: 1.6e-5
   test.each([
     [10, 9.9, 0],
     [10, 9.9, 1],
@@ -32,7 +33,7 @@ describe('enrichment(before, after, kept) is (before / after)^kept', () => {
     [10, 2, 0.7],
     [10, 9.99, 0.5],
   ])('%d mm to %d mm with %d kept', (before, after, kept) => {
-    expect(Math.abs(enrichment(before, after, kept) / (before / after) ** kept - 1)).toBeLessThan(1e-5);
+    expect(Math.abs(enrichment(before, after, kept) / (before / after) ** kept - 1)).toBeLessThan(2e-5);
   });
 
   test('solute is conserved at both ends: nothing kept, everything kept', () => {

@@ -129,7 +129,8 @@ describe('runColumn: tritium through steady storage', () => {
 
   test.each(rows)('exponential piston flow of ratio 1.5, mean $mean_yr years', ({ mean_yr, 'epm_eta1.5': expected }) => {
     const total = flow * mean_yr * YEAR;
+    // the corner lies within a parcel, whose older part alone is drawn: a third spread of ages
     const selection: Selection = { form: 'piecewise', storage: [total / 3, total], share: [0, 1] };
-    expect(Math.abs(ratio(mean_yr, selection, 40, 9) - expected)).toBeLessThan(within(mean_yr, 40) + 3e-6);
+    expect(Math.abs(ratio(mean_yr, selection, 40, 9) - expected)).toBeLessThan(1.5 * within(mean_yr, 40) + 3e-6);
   });
 });
