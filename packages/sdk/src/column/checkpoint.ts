@@ -42,7 +42,7 @@ export function makeCheckpoint(runner: ColumnRunner): Checkpoint {
     wetnessHigh: runner.wetness[1],
     clockTimes: [...(clock?.times ?? [])],
     clockAmounts: [...(clock?.amounts ?? [])],
-    lastShare: rows(state.lastShare, state.outflows),
+    lastShare: state.lastShare.flatMap((list) => Array.from(list.subarray(0, count))),
     concentration: rows(state.concentration, state.tracers),
     ledgers: runner.ledgers.flatMap((ledger) => [ledger.entered, ledger.left, ledger.reacted, ledger.held]),
   };
@@ -76,7 +76,7 @@ export function restore(runner: ColumnRunner, checkpoint: Checkpoint): void {
   const spread = (from: number[], to: Float64Array, n: number): void => {
     for (let row = 0; row < n; row++) for (let i = 0; i < count; i++) to[row * state.capacity + i] = from[row * count + i];
   };
-  spread(list('lastShare'), state.lastShare, state.outflows);
+  state.lastShare.forEach((share, f) => share.set(list('lastShare').slice(f * count, (f + 1) * count)));
   spread(list('concentration'), state.concentration, state.tracers);
   if (clock !== null) {
     clock.times = [...list('clockTimes')];

@@ -18,14 +18,13 @@ export class ColumnState {
   enteredBefore = new Float64Array(0);
   enteredAfter = new Float64Array(0);
   /** [outflows × capacity] Ω last seen at the older edge of each parcel: the predictor of the next midpoint. */
-  lastShare = new Float64Array(0);
+  readonly lastShare: Float64Array<ArrayBuffer>[];
   /** [tracers × capacity] */
   concentration = new Float64Array(0);
   /** [capacity] index of the followed inflow, −1 otherwise. */
   followed = new Int32Array(0);
-  /** [outflows × capacity] scratch of a step: mm taken from each parcel, and from it and all younger ones. */
-  taken = new Float64Array(0);
-  cumulative = new Float64Array(0);
+  /** [outflows × capacity] scratch of a step: mm taken from each parcel and all younger ones. */
+  readonly cumulative: Float64Array<ArrayBuffer>[];
 
   /** mm of pre-record water. */
   preRecord: number;
@@ -39,6 +38,8 @@ export class ColumnState {
     readonly tracers: number,
     initialStorage: number,
   ) {
+    this.lastShare = Array.from({ length: outflows }, () => new Float64Array(0));
+    this.cumulative = Array.from({ length: outflows }, () => new Float64Array(0));
     this.preRecord = initialStorage;
     this.total = initialStorage;
     this.reserve(FIRST_CAPACITY);
@@ -52,10 +53,11 @@ export class ColumnState {
     this.entryEnd = grown(this.entryEnd, size);
     this.enteredBefore = grown(this.enteredBefore, size);
     this.enteredAfter = grown(this.enteredAfter, size);
-    this.lastShare = regrown(this.lastShare, this.outflows, this.capacity, size);
+    for (let f = 0; f < this.outflows; f++) {
+      this.lastShare[f] = grown(this.lastShare[f], size);
+      this.cumulative[f] = grown(this.cumulative[f], size);
+    }
     this.concentration = regrown(this.concentration, this.tracers, this.capacity, size);
-    this.taken = new Float64Array(this.outflows * size);
-    this.cumulative = new Float64Array(this.outflows * size);
     const followed = new Int32Array(size).fill(-1);
     followed.set(this.followed);
     this.followed = followed;
@@ -71,24 +73,30 @@ export class ColumnState {
     this.enteredBefore[i] = enteredBefore;
     this.enteredAfter[i] = enteredAfter;
     this.followed[i] = followed;
-    for (let f = 0; f < this.outflows; f++) this.lastShare[f * this.capacity + i] = 0;
+    for (let f = 0; f < this.outflows; f++) this.lastShare[f][i] = 0;
+  }
+
+  /** mm that outflow f took from parcel i in the step. */
+  takenFrom(f: number, i: number): number {
+    const reached = this.cumulative[f];
+    return i + 1 < this.count ? reached[i] - reached[i + 1] : reached[i];
   }
 
   /**
-   * Adds what was taken in a part of a step to `sum` ([outflows × capacity], replaced if it is too short); after the last part the whole
-   * step's amounts stand in `taken` and `cumulative`.
+   * Adds what was taken in a part of a step to `sum` ([outflows × capacity] by parcel, replaced if it is too short); after the last part
+   * the whole step's amounts stand in `cumulative`.
    */
   addTaken(sum: Float64Array<ArrayBuffer>, last: boolean): Float64Array<ArrayBuffer> {
-    const all = sum.length === this.taken.length ? sum : regrown(sum, this.outflows, sum.length / this.outflows, this.capacity);
+    const size = this.outflows * this.capacity;
+    const all = sum.length === size ? sum : regrown(sum, this.outflows, sum.length / this.outflows, this.capacity);
     for (let f = 0; f < this.outflows; f++) {
       const base = f * this.capacity;
-      for (let i = 0; i < this.count; i++) all[base + i] += this.taken[base + i];
+      for (let i = 0; i < this.count; i++) all[base + i] += this.takenFrom(f, i);
       if (!last) continue;
       let reached = 0;
       for (let i = this.count - 1; i >= 0; i--) {
-        this.taken[base + i] = all[base + i];
         reached += all[base + i];
-        this.cumulative[base + i] = reached;
+        this.cumulative[f][i] = reached;
       }
     }
     return all;
@@ -128,9 +136,9 @@ export class ColumnState {
   private feeds(older: number, younger: number): number {
     let most = 0;
     for (let f = 0; f < this.outflows; f++) {
-      const base = f * this.capacity;
-      const above = younger + 1 < this.count ? this.lastShare[base + younger + 1] : 0;
-      most = Math.max(most, this.lastShare[base + older] - above);
+      const share = this.lastShare[f];
+      const above = younger + 1 < this.count ? share[younger + 1] : 0;
+      most = Math.max(most, share[older] - above);
     }
     return most;
   }
@@ -155,7 +163,7 @@ export class ColumnState {
     this.enteredBefore[to] = this.enteredBefore[from];
     this.enteredAfter[to] = this.enteredAfter[from];
     this.followed[to] = this.followed[from];
-    for (let f = 0; f < this.outflows; f++) this.lastShare[f * this.capacity + to] = this.lastShare[f * this.capacity + from];
+    for (let f = 0; f < this.outflows; f++) this.lastShare[f][to] = this.lastShare[f][from];
     for (let t = 0; t < this.tracers; t++) this.concentration[t * this.capacity + to] = this.concentration[t * this.capacity + from];
   }
 }

@@ -22,6 +22,9 @@ export class ColumnStep {
   private readonly largestPart: number;
   private readonly above: Float64Array;
   private readonly loss: Float64Array;
+  private readonly given: Float64Array;
+  /** Cumulative amounts of the parcel above as they were before the bottom was held. */
+  private readonly previous: Float64Array;
   private lastInflow = 0;
 
   constructor(evaluator: SelectionEvaluator, everyAge: boolean) {
@@ -33,6 +36,8 @@ export class ColumnStep {
     this.preTaken = new Float64Array(count);
     this.above = new Float64Array(count);
     this.loss = new Float64Array(count);
+    this.given = new Float64Array(count);
+    this.previous = new Float64Array(count);
   }
 
   /** The inflow of the step before: part of the state, since the choice of method looks at it. */
@@ -90,7 +95,7 @@ export class ColumnStep {
       if (i >= 0) {
         const middle = totalBefore + 0.5 * (inflow - out) * days;
         fast!.run(state, i, edge, above[0], outflows > 1 ? above[1] : 0, inflow, flux, days, middle);
-        for (let f = 0; f < outflows; f++) above[f] = state.cumulative[f * state.capacity];
+        for (let f = 0; f < outflows; f++) above[f] = state.cumulative[f][0];
       }
     }
     state.total = totalAfter;
@@ -107,7 +112,7 @@ export class ColumnStep {
   private fromPreRecord(state: ColumnState, flux: Float64Array, days: number): number {
     let gone = 0;
     for (let f = 0; f < state.outflows; f++) {
-      const last = state.count > 0 ? state.cumulative[f * state.capacity] : 0;
+      const last = state.count > 0 ? state.cumulative[f][0] : 0;
       this.preTaken[f] = Math.max(0, flux[f] * days - last);
       gone += this.preTaken[f];
     }
@@ -117,8 +122,7 @@ export class ColumnStep {
   /** Without outflow every parcel keeps its depth and a new one takes what falls. */
   private fill(state: ColumnState, fallen: number): void {
     for (let f = 0; f < state.outflows; f++) {
-      state.taken.fill(0, f * state.capacity, f * state.capacity + state.count);
-      state.cumulative.fill(0, f * state.capacity, f * state.capacity + state.count);
+      state.cumulative[f].fill(0, 0, state.count);
     }
     if (fallen > 0) state.depth[state.count - 1] = fallen;
   }
@@ -134,7 +138,6 @@ export class ColumnStep {
     share: Float64Array,
   ): void {
     const { above, loss } = this;
-    const { capacity } = state;
     let all = 0;
     for (let f = 0; f < above.length; f++) {
       loss[f] = Math.max(0, Math.min(taken[f], flux[f] * days) - above[f]);
@@ -145,9 +148,8 @@ export class ColumnStep {
     for (let f = 0; f < above.length; f++) {
       loss[f] *= keep;
       above[f] += loss[f];
-      state.taken[f * capacity + i] = loss[f];
-      state.cumulative[f * capacity + i] = above[f];
-      state.lastShare[f * capacity + i] = share[f];
+      state.cumulative[f][i] = above[f];
+      state.lastShare[f][i] = share[f];
     }
     state.depth[i] = all > there ? 0 : Math.max(0, there - all);
   }
@@ -157,7 +159,7 @@ export class ColumnStep {
    * oldest water there is. The excess depth goes to the outflows in proportion to what they still lack.
    */
   private holdAboveBottom(state: ColumnState, flux: Float64Array, days: number): void {
-    const { capacity, count, outflows, cumulative, taken, depth } = state;
+    const { count, outflows, cumulative, depth } = state;
     const bottom = state.total;
     let edge = 0;
     let i = count - 1;
@@ -165,23 +167,27 @@ export class ColumnStep {
       if (edge + depth[i] > bottom) break;
       edge += depth[i];
     }
+    this.above.fill(0);
+    if (i + 1 < count) for (let f = 0; f < outflows; f++) this.above[f] = cumulative[f][i + 1];
+    let rewritten = false;
     for (; i >= 0; i--) {
-      const newer = i + 1;
       let lacking = 0;
       for (let f = 0; f < outflows; f++) {
-        const aboveHere = newer < count ? cumulative[f * capacity + newer] : 0;
-        this.loss[f] = Math.max(0, flux[f] * days - aboveHere - taken[f * capacity + i]);
+        // what this parcel gave before, from the amounts not yet rewritten
+        const before = i + 1 < count ? (rewritten ? this.previous[f] : cumulative[f][i + 1]) : 0;
+        this.given[f] = cumulative[f][i] - before;
+        this.loss[f] = Math.max(0, flux[f] * days - this.above[f] - this.given[f]);
         lacking += this.loss[f];
       }
-      const allowed = Math.max(0, bottom - edge);
-      const excess = Math.min(depth[i] - allowed, lacking);
-      if (excess > 0) {
-        for (let f = 0; f < outflows; f++) taken[f * capacity + i] += (excess * this.loss[f]) / lacking;
-        depth[i] -= excess;
-      }
+      const excess = Math.min(depth[i] - Math.max(0, bottom - edge), lacking);
       for (let f = 0; f < outflows; f++) {
-        cumulative[f * capacity + i] = (newer < count ? cumulative[f * capacity + newer] : 0) + taken[f * capacity + i];
+        this.previous[f] = cumulative[f][i];
+        if (excess > 0) this.given[f] += (excess * this.loss[f]) / lacking;
+        this.above[f] += this.given[f];
+        cumulative[f][i] = this.above[f];
       }
+      rewritten = true;
+      if (excess > 0) depth[i] -= excess;
       edge += depth[i];
     }
   }

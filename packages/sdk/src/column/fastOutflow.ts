@@ -1,6 +1,7 @@
 import type { ActivePiece } from '../selection/index.js';
 
-export const INTERVALS = 2048;
+/** What T may lack where its table ends. */
+const COMPLETE = 1e-8;
 const CHECK_NODES = 96;
 export const LAST_NODE = CHECK_NODES - 1;
 const CHECK_DECADES = 8;
@@ -8,8 +9,9 @@ const CHECK_LOWEST = -5;
 
 /** One outflow as the fast pass sees it: Ω = T(S / scale) + slope · S / total. */
 export interface FastOutflow {
-  /** [2 × INTERVALS + 2] value and rise of T over each interval of z = √(x/(x + centre)). */
+  /** [2 × intervals + 2] value and rise of T over each interval of √x from 0 to `reach`; T is complete beyond. */
   table: Float64Array;
+  reach: number;
   centre: number;
   /** The piece whose scale is driven; null when the table is in mm. */
   scaled: ActivePiece | null;
@@ -22,7 +24,7 @@ export interface FastOutflow {
 }
 
 /** Tabulates one outflow's selection and what bounds the error of few look-ups. */
-export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePiece | null, centre: number): FastOutflow {
+export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePiece | null, centre: number, intervals: number): FastOutflow {
   const curved = group.filter((active) => !active.overTotal);
   const value = (x: number): number => {
     let sum = 0;
@@ -41,15 +43,19 @@ export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePie
     return sum;
   };
   const whole = curved.reduce((sum, active) => sum + active.weight, 0);
-  const table = new Float64Array(2 * INTERVALS + 2);
+  let end = centre;
+  while (whole - value(end) > COMPLETE) end *= 1.5;
+  const reach = Math.sqrt(end);
+  const table = new Float64Array(2 * intervals + 2);
   let before = 0;
-  for (let k = 0; k <= INTERVALS; k++) {
-    const z = (k + 1) / INTERVALS;
+  for (let k = 0; k < intervals; k++) {
+    const root = (reach * (k + 1)) / intervals;
+    const after = k + 1 < intervals ? value(root * root) : whole;
     table[2 * k] = before;
-    const after = k + 1 < INTERVALS ? value((centre * z * z) / (1 - z * z)) : whole;
     table[2 * k + 1] = after - before;
     before = after;
   }
+  table[2 * intervals] = whole;
   const curvature = new Float64Array(CHECK_NODES);
   const bend = new Float64Array(CHECK_NODES);
   const density = new Float64Array(CHECK_NODES);
@@ -63,7 +69,7 @@ export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePie
     density[n] = Math.max(slopeAt(x), n + 1 < CHECK_NODES ? density[n + 1] : 0);
   }
   const slope = group.filter((active) => active.overTotal).reduce((sum, active) => sum + active.weight, 0);
-  return { table, centre, scaled, slope, curvature, bend, density };
+  return { table, reach, centre, scaled, slope, curvature, bend, density };
 }
 
 /** x of a check node; nodes are spaced evenly in log x. */

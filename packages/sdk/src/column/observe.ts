@@ -37,25 +37,24 @@ export function timeOfShare(state: ColumnState, clock: InflowClock | null, i: nu
 
 /** mm that outflow f took in this step from water that entered after `time`; `first` from {@link firstYoungerThan}. */
 export function takenAfter(state: ColumnState, clock: InflowClock | null, f: number, time: number, first: number): number {
-  const base = f * state.capacity;
-  const whole = first < state.count ? state.cumulative[base + first] : 0;
+  const whole = first < state.count ? state.cumulative[f][first] : 0;
   const i = first - 1;
   if (i < 0 || state.entryEnd[i] <= time) return whole;
-  return whole + shareAfter(state, clock, i, time) * state.taken[base + i];
+  return whole + shareAfter(state, clock, i, time) * state.takenFrom(f, i);
 }
 
 /** Entry time of the water at which outflow f reaches `amount` mm, counted from the youngest; NaN if its parcels give less. */
 export function timeOfAmount(state: ColumnState, clock: InflowClock | null, f: number, amount: number): number {
-  const base = f * state.capacity;
-  if (state.count === 0 || !(state.cumulative[base] >= amount)) return NaN;
+  if (state.count === 0 || !(state.cumulative[f][0] >= amount)) return NaN;
   let low = 0;
   let high = state.count;
   while (high - low > 1) {
     const middle = (low + high) >> 1;
-    if (state.cumulative[base + middle] >= amount) low = middle;
+    if (state.cumulative[f][middle] >= amount) low = middle;
     else high = middle;
   }
-  const above = low + 1 < state.count ? state.cumulative[base + low + 1] : 0;
-  const share = state.taken[base + low] > 0 ? (amount - above) / state.taken[base + low] : 0;
+  const above = low + 1 < state.count ? state.cumulative[f][low + 1] : 0;
+  const given = state.takenFrom(f, low);
+  const share = given > 0 ? (amount - above) / given : 0;
   return timeOfShare(state, clock, low, share < 0 ? 0 : share > 1 ? 1 : share);
 }

@@ -89,9 +89,8 @@ export class Recorder {
       }
       out.preRecordShare[k] = preTaken[f] / amount;
       if (state.assumed > 0) {
-        const base = f * state.capacity;
-        const newer = state.assumed < state.count ? state.cumulative[base + state.assumed] : 0;
-        out.assumedShare[k] = (state.cumulative[base] - newer) / amount;
+        const newer = state.assumed < state.count ? state.cumulative[f][state.assumed] : 0;
+        out.assumedShare[k] = (state.cumulative[f][0] - newer) / amount;
       }
       for (let a = 0; a < ages.length; a++) {
         this.shareSeries[f][a][k] = takenAfter(state, clock, f, now - ages[a] / stepDays, this.firsts[a]) / amount;
@@ -126,7 +125,7 @@ export class Recorder {
       }
       for (let i = 0; i < state.count; i++) {
         if (state.followed[i] !== index) continue;
-        for (let f = 0; f < this.names.length; f++) entry.left[this.names[f]][place] += state.taken[f * state.capacity + i];
+        for (let f = 0; f < this.names.length; f++) entry.left[this.names[f]][place] += state.takenFrom(f, i);
         entry.stored[place] += state.depth[i];
       }
     }
@@ -179,7 +178,6 @@ export class Recorder {
 function distributionOf(state: ColumnState, f: number, now: number, stepDays: number, amount: number): AgeDistribution {
   const age: number[] = [];
   const share: number[] = [];
-  const base = f * state.capacity;
   let reached = 0;
   for (let i = state.count - 1; i >= 0; i--) {
     const younger = (now - state.entryEnd[i]) * stepDays;
@@ -187,7 +185,7 @@ function distributionOf(state: ColumnState, f: number, now: number, stepDays: nu
       age.push(younger);
       share.push(reached);
     }
-    reached = state.cumulative[base + i] / amount;
+    reached = state.cumulative[f][i] / amount;
     age.push((now - state.entryStart[i]) * stepDays);
     share.push(reached);
   }

@@ -14,7 +14,7 @@ export class TracerLedger {
 const profile = new Float64Array(2);
 
 /**
- * Moves one tracer through a step whose water is already moved (`state.taken`, `state.depth`).
+ * Moves one tracer through a step whose water is already moved (`state.cumulative`, `state.depth`).
  * @param index     which tracer of the state
  * @param entered   mm of inflow to the youngest parcel, 0 if nothing entered
  * @param inflow    concentration of the inflow (ignored without inflow)
@@ -33,7 +33,7 @@ export function moveTracer(
   preTaken: Float64Array,
   out: Float64Array,
 ): void {
-  const { taken, capacity, count, outflows } = state;
+  const { cumulative, capacity, count, outflows } = state;
   const concentration = state.concentration.subarray(index * capacity, index * capacity + count);
   if (entered > 0) {
     concentration[count - 1] = inflow;
@@ -50,9 +50,13 @@ export function moveTracer(
     return;
   }
   for (let f = 0; f < outflows; f++) {
-    const base = f * capacity;
     let sum = 0;
-    for (let i = 0; i < count; i++) sum += taken[base + i] * concentration[i];
+    let above = 0;
+    for (let i = count - 1; i >= 0; i--) {
+      const reached = cumulative[f][i];
+      sum += (reached - above) * concentration[i];
+      above = reached;
+    }
     out[f] += sum;
     ledger.left += sum;
   }
@@ -67,7 +71,7 @@ function react(
   days: number,
   out: Float64Array,
 ): void {
-  const { taken, depth, capacity, count, outflows } = state;
+  const { depth, count, outflows } = state;
   const { carried, rate, target } = plan;
   const decay = Math.exp(-rate * days);
   const meanDecay = meanOfDecay(rate * days);
@@ -75,7 +79,7 @@ function react(
     let water = 0;
     let withSolute = 0;
     for (let f = 0; f < outflows; f++) {
-      const mm = taken[f * capacity + i];
+      const mm = state.takenFrom(f, i);
       water += mm;
       withSolute += carried[f] * mm;
     }
@@ -103,7 +107,7 @@ function react(
     concentration[i] = end;
     let left = 0;
     for (let f = 0; f < outflows; f++) {
-      const mass = carried[f] * taken[f * capacity + i] * mean;
+      const mass = carried[f] * state.takenFrom(f, i) * mean;
       out[f] += mass;
       left += mass;
     }

@@ -55,6 +55,7 @@ export class SelectionEvaluator {
       .map((name, outflow) => ({ name, outflow }))
       .filter((_entry, index) => compiled[index].some((one) => one.weights.length > 0));
     if (this.steady) this.setNumbers(0);
+    else this.fillNumbers();
     this.joint = this.steady ? JointTable.for(this.pieces, names.length) : null;
   }
 
@@ -109,6 +110,11 @@ export class SelectionEvaluator {
   }
 
   private setNumbers(step: number): void {
+    this.fillNumbers();
+    for (const mixture of this.mixtures) this.checkWeights(mixture, step);
+  }
+
+  private fillNumbers(): void {
     const values = this.amounts.values;
     this.youngest.fill(0);
     for (const active of this.pieces) {
@@ -122,7 +128,6 @@ export class SelectionEvaluator {
       if (piece.q >= 0) active.q = values[piece.q];
       if (active.limit === 'youngest') this.youngest[active.outflow] += weight;
     }
-    for (const mixture of this.mixtures) this.checkWeights(mixture, step);
   }
 
   private checkWeights(mixture: { outflow: number; name: string }, step: number): void {
