@@ -178,7 +178,7 @@ export class FastPass {
   /**
    * Moves parcels `from` … 0 through the step. `edge`, `x0` and `x1` are the depth and the amounts taken above parcel `from`;
    * `state.depth`, `cumulative` and `lastShare` hold the result. Where a parcel would lose more than it has, or less than nothing, its
-   * loss is cut and the rest falls to the next older one. The loop is the cost of a run: few arrays, no calls.
+   * loss is cut and the rest falls to the next older one.
    */
   run(
     state: ColumnState,
@@ -193,64 +193,112 @@ export class FastPass {
   ): void {
     const two = this.count > 1;
     if (!two && this.spare.length < state.capacity) this.spare = new Float64Array(state.capacity);
-    const depth = state.depth;
-    const last0 = state.lastShare[0];
-    const reached0 = state.cumulative[0];
-    const last1 = two ? state.lastShare[1] : this.spare;
-    const reached1 = two ? state.cumulative[1] : this.spare;
-    const { table, perRoot0, perRoot1 } = this;
-    const ahead = AHEAD;
     const out0 = flux[0] * days;
     const out1 = two ? flux[1] * days : 0;
-    const push = 0.5 * days * inflow;
-    const pull0 = 0.5 * out0;
-    const pull1 = 0.5 * out1;
-    const slope0 = this.slope0 / totalAtMiddle;
-    const slope1 = this.slope1 / totalAtMiddle;
-    for (let i = from; i >= 0; i--) {
-      let mm = 0;
-      let loss0 = 0;
-      let loss1 = 0;
-      for (; i >= 0; i--) {
-        mm = depth[i];
-        edge += mm;
-        const before0 = last0[i];
-        const before1 = last1[i];
-        const middle = edge + push - pull0 * before0 - pull1 * before1;
-        const root = Math.sqrt(middle);
-        const place0 = root * perRoot0;
-        const place1 = root * perRoot1;
-        const k0 = Math.min(place0 | 0, INTERVALS) << 2;
-        const k1 = Math.min(place1 | 0, INTERVALS) << 2;
-        const share0 = table[k0] + (place0 - (k0 >> 2)) * table[k0 + 1] + slope0 * middle;
-        const share1 = table[k1 + 2] + (place1 - (k1 >> 2)) * table[k1 + 3] + slope1 * middle;
-        last0[i] = share0 + ahead * (share0 - before0);
-        last1[i] = share1 + ahead * (share1 - before1);
-        const now0 = out0 * share0;
-        const now1 = out1 * share1;
-        loss0 = now0 - x0;
-        loss1 = now1 - x1;
-        const rest = mm - loss0 - loss1;
-        if (!(loss0 >= 0 && loss1 >= 0 && rest >= 0)) break;
-        x0 = now0;
-        x1 = now1;
-        depth[i] = rest;
-        reached0[i] = now0;
-        reached1[i] = now1;
-      }
-      if (i < 0) break;
-      loss0 = Math.max(0, loss0);
-      loss1 = Math.max(0, loss1);
+    const place = this.place;
+    place[0] = edge;
+    place[1] = x0;
+    place[2] = x1;
+    const last1 = two ? state.lastShare[1] : this.spare;
+    const reached1 = two ? state.cumulative[1] : this.spare;
+    let i = from;
+    while (i >= 0) {
+      i = this.sweep(
+        i,
+        state.depth,
+        state.lastShare[0],
+        last1,
+        state.cumulative[0],
+        reached1,
+        this.table,
+        place,
+        0.5 * days * inflow,
+        out0,
+        out1,
+        this.slope0 / totalAtMiddle,
+        this.slope1 / totalAtMiddle,
+      );
+      if (i < 0) return;
+      const mm = state.depth[i];
+      const loss0 = Math.max(0, place[3]);
+      const loss1 = Math.max(0, place[4]);
       const all = loss0 + loss1;
       const keep = all > mm ? mm / all : 1;
-      x0 += keep * loss0;
-      x1 += keep * loss1;
-      depth[i] = all > mm ? 0 : mm - all;
-      reached0[i] = x0;
-      reached1[i] = x1;
+      place[1] += keep * loss0;
+      place[2] += keep * loss1;
+      state.depth[i] = all > mm ? 0 : mm - all;
+      state.cumulative[0][i] = place[1];
+      reached1[i] = place[2];
+      i--;
     }
   }
 
+  /**
+   * The loop that a run's cost is made of, kept free of everything else: moves parcels from `i` down until one would lose more than it has
+   * or less than nothing, and returns its index, −1 if there is none. `place` holds edge, x0, x1 and that parcel's losses.
+   */
+  private sweep(
+    i: number,
+    depth: Float64Array,
+    last0: Float64Array,
+    last1: Float64Array,
+    reached0: Float64Array,
+    reached1: Float64Array,
+    table: Float64Array,
+    place: Float64Array,
+    push: number,
+    out0: number,
+    out1: number,
+    slope0: number,
+    slope1: number,
+  ): number {
+    const perRoot0 = this.perRoot0;
+    const perRoot1 = this.perRoot1;
+    const pull0 = 0.5 * out0;
+    const pull1 = 0.5 * out1;
+    let edge = place[0];
+    let x0 = place[1];
+    let x1 = place[2];
+    for (; i >= 0; i--) {
+      const mm = depth[i];
+      edge += mm;
+      const before0 = last0[i];
+      const before1 = last1[i];
+      const middle = edge + push - pull0 * before0 - pull1 * before1;
+      const root = Math.sqrt(middle);
+      const at0 = root * perRoot0;
+      const at1 = root * perRoot1;
+      const k0 = Math.min(at0 | 0, INTERVALS);
+      const k1 = Math.min(at1 | 0, INTERVALS);
+      const q0 = k0 << 2;
+      const q1 = k1 << 2;
+      const share0 = table[q0] + (at0 - k0) * table[q0 + 1] + slope0 * middle;
+      const share1 = table[q1 + 2] + (at1 - k1) * table[q1 + 3] + slope1 * middle;
+      last0[i] = share0 + AHEAD * (share0 - before0);
+      last1[i] = share1 + AHEAD * (share1 - before1);
+      const now0 = out0 * share0;
+      const now1 = out1 * share1;
+      const loss0 = now0 - x0;
+      const loss1 = now1 - x1;
+      const rest = mm - loss0 - loss1;
+      if (!(loss0 >= 0 && loss1 >= 0 && rest >= 0)) {
+        place[0] = edge;
+        place[1] = x0;
+        place[2] = x1;
+        place[3] = loss0;
+        place[4] = loss1;
+        return i;
+      }
+      x0 = now0;
+      x1 = now1;
+      depth[i] = rest;
+      reached0[i] = now0;
+      reached1[i] = now1;
+    }
+    return -1;
+  }
+
+  private readonly place = new Float64Array(5);
   /** Stands in for the second outflow where there is one only. */
   private spare = new Float64Array(0);
 }
