@@ -1,6 +1,4 @@
 const FIRST_CAPACITY = 256;
-/** Share of an outflow that a merged parcel may give: within it, ages and concentrations are no longer told apart. */
-const LARGEST_MERGED = 0.006;
 
 /**
  * The storage as parcels, oldest at index 0, youngest last. Times are in steps since the record began (negative during spin-up),
@@ -21,6 +19,8 @@ export class ColumnState {
   readonly lastShare: Float64Array<ArrayBuffer>[];
   /** [tracers × capacity] */
   concentration = new Float64Array(0);
+  /** [capacity] depth at the start of the step, with what enters in it; kept where a tracer reacts. */
+  before = new Float64Array(0);
   /** [capacity] index of the followed inflow, −1 otherwise. */
   followed = new Int32Array(0);
   /** [outflows × capacity] scratch of a step: mm taken from each parcel and all younger ones. */
@@ -49,6 +49,7 @@ export class ColumnState {
     if (capacity <= this.capacity) return;
     const size = Math.max(capacity, 2 * this.capacity);
     this.depth = grown(this.depth, size);
+    this.before = grown(this.before, size);
     this.entryStart = grown(this.entryStart, size);
     this.entryEnd = grown(this.entryEnd, size);
     this.enteredBefore = grown(this.enteredBefore, size);
@@ -74,6 +75,12 @@ export class ColumnState {
     this.enteredAfter[i] = enteredAfter;
     this.followed[i] = followed;
     for (let f = 0; f < this.outflows; f++) this.lastShare[f][i] = 0;
+  }
+
+  /** Notes every depth before a step; the youngest parcel is what enters in it, if anything does. */
+  keepBefore(entering: number): void {
+    this.before.set(this.depth.subarray(0, this.count));
+    if (entering > 0) this.before[this.count - 1] = entering;
   }
 
   /** mm that outflow f took from parcel i in the step. */
@@ -103,10 +110,11 @@ export class ColumnState {
   }
 
   /**
-   * Drops used-up parcels and merges neighbours whose joint entry interval is at most `resolution` × the age of its younger end.
+   * Drops used-up parcels and merges neighbours whose joint entry interval is at most `resolution` × the age of its younger end and
+   * that together give at most the share `largest` of any outflow.
    * Depth, entered amounts and tracer mass add up exactly; the boundary between them is forgotten.
    */
-  merge(now: number, resolution: number): void {
+  merge(now: number, resolution: number, largest: number): void {
     let kept = 0;
     let assumed = 0;
     for (let i = 0; i < this.count; i++) {
@@ -120,7 +128,7 @@ export class ColumnState {
         this.followed[last] < 0 &&
         isAssumed === last < assumed &&
         this.entryEnd[i] - this.entryStart[last] <= resolution * (now - this.entryEnd[i]) &&
-        this.feeds(last, i) <= LARGEST_MERGED;
+        this.feeds(last, i) <= largest;
       if (joins) this.join(last, i);
       else {
         if (kept !== i) this.move(kept, i);

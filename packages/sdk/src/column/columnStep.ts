@@ -6,6 +6,8 @@ import { FastPass } from './fastPass.js';
 /** Error allowed in the share of the step's outflow taken above any one boundary. */
 export const EXACT_TOLERANCE = 1e-9;
 export const DEFAULT_TOLERANCE = 2e-5;
+/** The same where selections have corners or steep ends, which the fast pass is not made for. */
+export const UNEVEN_TOLERANCE = 2e-6;
 /** Share of a step at most taken at once where a selection has corners, which an error estimate may step over. */
 const CORNERED_PART = 0.125;
 
@@ -22,22 +24,27 @@ export class ColumnStep {
   private readonly largestPart: number;
   private readonly above: Float64Array;
   private readonly loss: Float64Array;
-  private readonly given: Float64Array;
-  /** Cumulative amounts of the parcel above as they were before the bottom was held. */
-  private readonly previous: Float64Array;
+  private readonly added: Float64Array;
   private lastInflow = 0;
 
-  constructor(evaluator: SelectionEvaluator, everyAge: boolean) {
+  constructor(
+    private readonly evaluator: SelectionEvaluator,
+    everyAge: boolean,
+  ) {
     const count = evaluator.names.length;
     this.integrator = new StepIntegrator(evaluator);
     this.fast = everyAge ? null : FastPass.for(evaluator);
-    this.tolerance = everyAge ? EXACT_TOLERANCE : DEFAULT_TOLERANCE;
+    this.tolerance = everyAge ? EXACT_TOLERANCE : this.fast !== null ? DEFAULT_TOLERANCE : UNEVEN_TOLERANCE;
     this.largestPart = evaluator.pieces.some((active) => active.curve?.cornered) ? CORNERED_PART : 1;
     this.preTaken = new Float64Array(count);
     this.above = new Float64Array(count);
     this.loss = new Float64Array(count);
-    this.given = new Float64Array(count);
-    this.previous = new Float64Array(count);
+    this.added = new Float64Array(count);
+  }
+
+  /** Share of an outflow that a merged parcel may give: within it, ages and concentrations are no longer told apart. */
+  get largestMerged(): number {
+    return this.largestPart < 1 ? 0.0015 : this.fast !== null ? 0.006 : 0.003;
   }
 
   /** The inflow of the step before: part of the state, since the choice of method looks at it. */
@@ -72,7 +79,7 @@ export class ColumnStep {
       let edge = 0;
       let i = state.count - 1;
       if (enters) {
-        if (fast !== null && inflow > out) {
+        if (fast !== null && inflow > out && fast.fourFrom < Infinity) {
           fast.four(0, inflow, flux, days, totalBefore, inflow - out);
           this.settle(state, i--, inflow * days, flux, days, fast.taken, fast.pair);
         } else {
@@ -84,7 +91,7 @@ export class ColumnStep {
         const start = edge + state.depth[i];
         if (fast !== null && start >= fast.oneFrom) break;
         edge = start;
-        if (fast !== null && (start >= fast.fourFrom || inflow > out)) {
+        if (fast !== null && (start >= fast.fourFrom || (inflow > out && fast.fourFrom < Infinity))) {
           fast.four(start, inflow, flux, days, totalBefore, inflow - out);
           this.settle(state, i, 0, flux, days, fast.taken, fast.pair);
         } else {
@@ -119,12 +126,18 @@ export class ColumnStep {
     return gone;
   }
 
-  /** Without outflow every parcel keeps its depth and a new one takes what falls. */
+  /** Without outflow every parcel keeps its depth and a new one takes what falls; Ω is looked up for the predictor of the next step. */
   private fill(state: ColumnState, fallen: number): void {
-    for (let f = 0; f < state.outflows; f++) {
-      state.cumulative[f].fill(0, 0, state.count);
-    }
     if (fallen > 0) state.depth[state.count - 1] = fallen;
+    let edge = 0;
+    for (let i = state.count - 1; i >= 0; i--) {
+      edge += state.depth[i];
+      if (this.fast !== null) this.evaluator.evaluate(edge, state.total + fallen, this.loss);
+      for (let f = 0; f < state.outflows; f++) {
+        state.cumulative[f][i] = 0;
+        if (this.fast !== null) state.lastShare[f][i] = Math.min(1, this.loss[f]);
+      }
+    }
   }
 
   /** Books what was taken above the boundary below parcel i; never more than there is, never less than nothing. */
@@ -167,27 +180,25 @@ export class ColumnStep {
       if (edge + depth[i] > bottom) break;
       edge += depth[i];
     }
-    this.above.fill(0);
-    if (i + 1 < count) for (let f = 0; f < outflows; f++) this.above[f] = cumulative[f][i + 1];
-    let rewritten = false;
+    // what each outflow still lacks after all parcels gave what its selection asked of them
+    let lacking = 0;
+    for (let f = 0; f < outflows; f++) {
+      this.loss[f] = Math.max(0, flux[f] * days - cumulative[f][0]);
+      lacking += this.loss[f];
+      this.added[f] = 0;
+    }
     for (; i >= 0; i--) {
-      let lacking = 0;
-      for (let f = 0; f < outflows; f++) {
-        // what this parcel gave before, from the amounts not yet rewritten
-        const before = i + 1 < count ? (rewritten ? this.previous[f] : cumulative[f][i + 1]) : 0;
-        this.given[f] = cumulative[f][i] - before;
-        this.loss[f] = Math.max(0, flux[f] * days - this.above[f] - this.given[f]);
-        lacking += this.loss[f];
-      }
       const excess = Math.min(depth[i] - Math.max(0, bottom - edge), lacking);
-      for (let f = 0; f < outflows; f++) {
-        this.previous[f] = cumulative[f][i];
-        if (excess > 0) this.given[f] += (excess * this.loss[f]) / lacking;
-        this.above[f] += this.given[f];
-        cumulative[f][i] = this.above[f];
+      if (excess > 0) {
+        for (let f = 0; f < outflows; f++) {
+          const part = (excess * this.loss[f]) / lacking;
+          this.added[f] += part;
+          this.loss[f] -= part;
+        }
+        depth[i] -= excess;
+        lacking -= excess;
       }
-      rewritten = true;
-      if (excess > 0) depth[i] -= excess;
+      for (let f = 0; f < outflows; f++) cumulative[f][i] += this.added[f];
       edge += depth[i];
     }
   }

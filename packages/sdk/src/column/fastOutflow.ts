@@ -2,7 +2,7 @@ import type { ActivePiece } from '../selection/index.js';
 
 /** What T may lack where its table ends. */
 const COMPLETE = 1e-8;
-const CHECK_NODES = 96;
+const CHECK_NODES = 56;
 export const LAST_NODE = CHECK_NODES - 1;
 const CHECK_DECADES = 8;
 const CHECK_LOWEST = -5;

@@ -86,7 +86,7 @@ export class FastPass {
     let uniform = 0;
     for (let f = 0; f < this.count; f++) {
       out += flux[f];
-      uniform += (flux[f] * this.outflows[f].slope * stretch * stretch) / 12;
+      uniform += (flux[f] * this.outflows[f].slope * stretch * stretch) / 3;
     }
     const allowedOne = (ONE_TOLERANCE * out - uniform) / this.count;
     const allowedFour = (FOUR_TOLERANCE * out - 0.01 * uniform) / this.count;
@@ -312,6 +312,11 @@ function isSuited(active: ActivePiece): boolean {
 
 function interleaved(a: Float64Array, b: Float64Array): Float64Array {
   const both = new Float64Array(2 * a.length);
-  for (let k = 0; 2 * k < a.length; k++) both.set([a[2 * k], a[2 * k + 1], b[2 * k], b[2 * k + 1]], 4 * k);
+  for (let k = 0; k < a.length; k += 2) {
+    both[2 * k] = a[k];
+    both[2 * k + 1] = a[k + 1];
+    both[2 * k + 2] = b[k];
+    both[2 * k + 3] = b[k + 1];
+  }
   return both;
 }

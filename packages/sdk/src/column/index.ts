@@ -54,11 +54,12 @@ export function startColumn(catchment: Catchment, forcing: Forcing, options: Run
   const repeats = options.spinUp?.repeats ?? 0;
   const start = catchment.initialStorage - repeats * storageChange(forcing);
   const resolution = options.ageResolution ?? DEFAULT_AGE_RESOLUTION;
-  const runner = new ColumnRunner(catchment, forcing, options, resolution, forcing.start, start);
+  const runner = new ColumnRunner(catchment, forcing, options, resolution, new Date(forcing.start).toISOString(), start);
   throwIfAny(describeDrivers(runner.evaluator, forcing));
   if (repeats > 0) requireStorage(forcing, start);
   requireStorage(forcing, catchment.initialStorage);
-  runner.wetness = catchment.wetnessRange ?? rangeOfStorage(forcing, catchment.initialStorage);
+  if (catchment.wetnessRange !== undefined) runner.wetness = catchment.wetnessRange;
+  else if (runner.evaluator.drivers.includes('wetness')) runner.wetness = rangeOfStorage(forcing, catchment.initialStorage);
   if (repeats > 0) {
     runner.spinUp(repeats);
     runner.state.total = catchment.initialStorage;

@@ -89,6 +89,7 @@ export class StepIntegrator {
       }
       if (part > this.largestPart) part = this.largestPart;
       if (s + part > 1) part = 1 - s;
+      let end = 0;
       for (let k = fresh ? 0 : 1; k < STAGE_COUNT; k++) {
         const place = s + NODES[k] * part;
         const time = power === 1 ? place : place ** power;
@@ -103,7 +104,7 @@ export class StepIntegrator {
         }
         evaluator.evaluate(reached, this.total + this.totalRate * time * span, share);
         for (let f = 0; f < count; f++) stage[k * count + f] = flux[f] * share[f] * speed;
-        if (k === STAGE_COUNT - 1) depth = reached;
+        if (k === STAGE_COUNT - 1) end = reached;
       }
       let error = 0;
       for (let f = 0; f < count; f++) {
@@ -117,7 +118,13 @@ export class StepIntegrator {
         fresh = true;
         continue;
       }
-      if (depth < 0) {
+      if (end < -this.allowed && part > SMALLEST_PART) {
+        // come closer to the moment at which it is used up
+        part *= Math.max(0.1, (0.95 * depth) / (depth - end));
+        fresh = true;
+        continue;
+      }
+      if (end < 0) {
         // used up within this part: all of what was left goes, in the proportion in which it was going
         let before = start + offset + inflow * s ** power * span;
         let gone = 0;
@@ -140,6 +147,7 @@ export class StepIntegrator {
         taken[f] = trial[f];
         stage[f] = stage[(STAGE_COUNT - 1) * count + f];
       }
+      depth = end;
       fresh = false;
       s += part;
       part *= Math.min(5, 0.9 * Math.max(ratio, 1e-6) ** -0.2);

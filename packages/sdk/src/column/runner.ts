@@ -12,6 +12,9 @@ export const DEFAULT_AGE_RESOLUTION = 0.05;
 /** Steps between passes that merge parcels and thin the clock; counted from the record's start, so that it never depends on who runs it. */
 const MERGE_EVERY = 8;
 const THIN_EVERY = 64;
+/** Share of storage below which pre-record water counts as about to run out, and share of an outflow that counts as a lump. */
+const NEARLY_GONE = 0.5;
+const LUMP = 0.1;
 /**
  * A parcel that is enriched or reacts is no longer alike within itself. Steps whose inflow feeds a large share of an outflow are cut into
  * parts for such tracers, so that a storm becomes several parcels: parts per share of the outflow, and at most.
@@ -46,6 +49,7 @@ export class ColumnRunner {
   private readonly inputs: Float64Array[];
   private readonly fluxes: Float64Array[];
   private readonly reacts: boolean;
+  private readonly limited: boolean;
   private readonly startMilliseconds: number;
   private middleStorage = 0;
   private at = 0;
@@ -79,6 +83,7 @@ export class ColumnRunner {
     this.share = new Float64Array(this.names.length);
     this.inputs = this.plans.map((plan) => forcing.inflowConcentration[plan.name]);
     this.fluxes = this.names.map((name) => forcing.outflows[name]);
+    this.limited = this.evaluator.pieces.some((active) => active.limit !== null);
     this.reacts = this.plans.some((plan) => !plan.conservative);
     this.startMilliseconds = parseInstant(forcing.start);
     this.balance = { initial: initialStorage, in: 0, out: 0 };
@@ -95,7 +100,7 @@ export class ColumnRunner {
     for (let repeat = repeats; repeat > 0; repeat--) {
       for (let k = 0; k < steps; k++) this.advanceOne(k, -repeat * steps + k, -1);
     }
-    this.state.merge(0, 0);
+    this.state.merge(0, 0, 0);
     this.state.assumed = this.state.count;
   }
 
@@ -150,6 +155,7 @@ export class ColumnRunner {
         state.append(time + part / parts, time + (part + 1) / parts, before, this.entered, follow);
         this.clock?.add(time + part / parts, time + (part + 1) / parts, before, this.entered);
       }
+      if (this.reacts) state.keepBefore(inflow * days);
       this.step.advance(state, inflow > 0, inflow, flux, days);
       const { preTaken } = this.step;
       for (let t = 0; t < this.plans.length; t++) {
@@ -165,8 +171,20 @@ export class ColumnRunner {
   }
 
   private tidy(now: number): void {
-    if (now % MERGE_EVERY === 0) this.state.merge(now, this.ageResolution);
+    if (now % MERGE_EVERY === 0) this.state.merge(now, this.oneParcelDecides() ? 0 : this.ageResolution, this.step.largestMerged);
     if (now % THIN_EVERY === 0) this.clock?.thin();
+  }
+
+  /**
+   * Whether the youngest or the oldest parcel alone can feed a good share of an outflow: with a limit among the selections, or once
+   * pre-record water runs out under selections that reach below the bottom. Then merged parcels would show, so none are made.
+   */
+  private oneParcelDecides(): boolean {
+    const { state, evaluator } = this;
+    if (this.limited) return true;
+    if (state.preRecord > NEARLY_GONE * state.total) return false;
+    evaluator.evaluate(state.total * (1 - 1e-9), state.total, this.share);
+    return this.share.some((share) => 1 - share > LUMP);
   }
 
   private partsFor(depth: number): number {

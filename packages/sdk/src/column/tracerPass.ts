@@ -84,7 +84,7 @@ function react(
       withSolute += carried[f] * mm;
     }
     const after = depth[i];
-    const before = after + water;
+    const before = state.before[i];
     const old = concentration[i];
     let end: number;
     let mean: number;

@@ -80,7 +80,7 @@ export class CurveTable {
     return nodes;
   }
 
-  /** The widest run of intervals, around the middle, whose middles are right; tested on every fourth and on all near the ends. */
+  /** The widest run of intervals, around the middle, whose middles are right; tested on every sixteenth and on all near the ends. */
   private goodRange(nodes: Float64Array, intervals: number): { low: number; high: number } {
     const wrong = (k: number): boolean => {
       const exact = this.curve.share(this.inverse((k + 0.5) / intervals), this.p, this.q);
@@ -88,12 +88,12 @@ export class CurveTable {
     };
     let low = 0;
     let high = intervals;
-    const ends = 48;
-    for (let k = 0; k < intervals; k += k < ends || k >= intervals - ends ? 1 : 4) {
+    const ends = 32;
+    for (let k = 0; k < intervals; k += k < ends || k >= intervals - ends ? 1 : 16) {
       if (!wrong(k)) continue;
-      if (k < intervals / 2) low = k + 4;
+      if (k < intervals / 2) low = k < ends ? k + 4 : k + 16;
       else {
-        high = Math.max(k - 4, low);
+        high = Math.max(k >= intervals - ends ? k - 4 : k - 16, low);
         break;
       }
     }

@@ -42,6 +42,8 @@ export class SelectionEvaluator {
   constructor(
     readonly names: readonly string[],
     selection: Catchment['selection'],
+    /** Without tables: every curve is evaluated itself. */
+    private readonly exact = false,
   ) {
     const issues: Issue[] = [];
     this.amounts = new AmountTable(issues);
@@ -56,7 +58,7 @@ export class SelectionEvaluator {
       .filter((_entry, index) => compiled[index].some((one) => one.weights.length > 0));
     if (this.steady) this.setNumbers(0);
     else this.fillNumbers();
-    this.joint = this.steady ? JointTable.for(this.pieces, names.length) : null;
+    this.joint = this.steady && !exact ? JointTable.for(this.pieces, names.length) : null;
   }
 
   /** Sets every driven parameter for one step. @throws RillageError `parameter-domain` or `mixture-weights`, naming the step */
@@ -103,7 +105,9 @@ export class SelectionEvaluator {
     const curve = piece.curve;
     const shapeFixed = constant(piece.p) && constant(piece.q);
     const table =
-      curve !== null && curve.costly && shapeFixed ? new CurveTable(curve, values[piece.p], piece.q < 0 ? NaN : values[piece.q]) : null;
+      curve !== null && curve.costly && shapeFixed && !this.exact
+        ? new CurveTable(curve, values[piece.p], piece.q < 0 ? NaN : values[piece.q])
+        : null;
     const steady = [...piece.weights, piece.scale, piece.from].every(constant) && shapeFixed;
     const overTotal = curve?.over === 'total';
     return { piece, outflow, steady, limit: piece.limit, curve, table, overTotal, weight: 1, inverseScale: 1, from: 0, p: NaN, q: NaN };

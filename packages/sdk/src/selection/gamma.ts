@@ -4,6 +4,9 @@ import { NOT_NEGATIVE, POSITIVE } from './amount.js';
 import type { Curve } from './curve.js';
 import { piece, type FormDefinition } from './form.js';
 
+/** ln Γ of the shape last asked for: tables ask for thousands of densities of one shape. */
+const known = { shape: NaN, log: 0 };
+
 /** Ω = P(shape, (S_T − from) / scale), the regularised lower incomplete gamma function, over unbounded storage (Harman 2015). */
 export const gammaCurve: Curve = {
   name: 'gamma',
@@ -12,7 +15,11 @@ export const gammaCurve: Curve = {
   density(x, shape) {
     if (x < 0) return 0;
     if (x === 0) return shape < 1 ? Infinity : shape === 1 ? 1 : 0;
-    return Math.exp((shape - 1) * Math.log(x) - x - logGamma(shape));
+    if (shape !== known.shape) {
+      known.shape = shape;
+      known.log = logGamma(shape);
+    }
+    return Math.exp((shape - 1) * Math.log(x) - x - known.log);
   },
   costly: true,
   cornered: false,

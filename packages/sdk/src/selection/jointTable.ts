@@ -50,11 +50,11 @@ export class JointTable {
     };
     let lowest = 1;
     let highest = INTERVALS;
-    for (let k = 1; k < INTERVALS; k += k < 64 ? 1 : 3) {
+    for (let k = 1; k < INTERVALS; k += k < 32 ? 1 : 12) {
       if (!wrong(k)) continue;
-      if (k < INTERVALS / 2) lowest = k + 3;
+      if (k < INTERVALS / 2) lowest = k < 32 ? k + 3 : k + 12;
       else {
-        highest = k - 3;
+        highest = k - 12;
         break;
       }
     }
