@@ -18,3 +18,8 @@ export { extraterrestrialRadiation } from './forcing/complete/radiation.js';
 export { limitByStorage, type RootZone } from './forcing/complete/limitByStorage.js';
 export { waterBalance, type WaterBalance } from './forcing/complete/waterBalance.js';
 export { runColumnInBackground, type BackgroundOptions } from './workers/runColumnInBackground.js';
+
+export { distributionOver, shareAt, shareOver, type WindowOptions, type WindowShare } from './ages/windows.js';
+export { residenceTimes } from './ages/residence.js';
+export { forwardDistribution, type ForwardDistribution } from './ages/forward.js';
+export { makeSection, sectionSteps, type Section } from './ages/section.js';
