@@ -23,7 +23,13 @@ export function syntheticForcing({ years = 20, stepDays = 1, seed = 7 } = {}) {
     active = Math.max(1, active + (inflow[k] - evapotranspiration[k] - discharge[k]) * stepDays);
     concentration[k] = -9 - 3 * Math.cos(season) + 2.5 * (random() - 0.5);
   }
-  return { start: '2000-01-01T00:00:00Z', stepDays, inflow, outflows: { discharge, evapotranspiration }, inflowConcentration: { d18O: concentration } };
+  return {
+    start: '2000-01-01T00:00:00Z',
+    stepDays,
+    inflow,
+    outflows: { discharge, evapotranspiration },
+    inflowConcentration: { d18O: concentration },
+  };
 }
 
 /** Park & Miller's minimal standard generator (ISO C++ minstd_rand0): enough for synthetic rain. */
