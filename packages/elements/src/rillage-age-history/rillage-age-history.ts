@@ -1,0 +1,343 @@
+import { LitElement, html, nothing, svg, type TemplateResult } from 'lit';
+import type { Sample, StationHistory } from '@rillage/sdk';
+import { buttonStyles } from '../shared/buttons.js';
+import { chartFrame, frameStyles } from '../shared/chart-frame.js';
+import { CursorLink } from '../shared/cursor-link.js';
+import { Cursor } from '../shared/cursor.js';
+import { DataTable, tableStyles } from '../shared/data-table.js';
+import { age } from '../shared/format.js';
+import { hatchPath } from '../shared/hatch.js';
+import { inkStyles } from '../shared/ink.js';
+import { Language } from '../shared/language.js';
+import type { Messages } from '../shared/messages.js';
+import { StationLink } from '../shared/station-link.js';
+import { cleanText } from '../shared/text.js';
+import { theme } from '../shared/theme.js';
+import { version } from '../version.js';
+import { asHistory, asSamples } from './check.js';
+import { changed, endOf, frameOf, stepAtTime, type Frame, type Span } from './frame.js';
+import { ageHistoryMessages, type AgeHistoryKey } from './messages.js';
+import { axesOf, medianPanel, stackPanel, tracerPanel } from './panels.js';
+import { bandsOf, stopsOf } from './stack.js';
+import { ageHistoryStyles } from './styles.js';
+import { bandName, historyRows, readAt, summary } from './words.js';
+
+/**
+ * The flow of the stream through time, split by the age of its water and stacked oldest at the base; beneath it the same as shares, the median
+ * age with its range, or a tracer as simulated and as bottled. Takes its history from the `rillage-station` around it, or from its property.
+ *
+ * @slot - What is shown as long as there is no history, or where scripts do not run.
+ * @csspart frame - All of it.
+ * @csspart name - The picture's name.
+ * @csspart summary - What it shows, in words.
+ * @csspart buttons - The row of buttons.
+ * @csspart button - Each button.
+ * @csspart picture - The picture, focusable.
+ * @csspart legend - What the colours mean.
+ * @csspart readout - What the cursor stands on.
+ * @csspart table - The data table.
+ * @cssprop --rillage-ink - Colour of text and lines. Default `CanvasText`.
+ * @cssprop --rillage-paper - Colour of the ground. Default `Canvas`.
+ * @cssprop --rillage-quiet - Colour of minor text. Default: ink, a quarter towards paper.
+ * @cssprop --rillage-hairline - Colour of rules. Default: ink, two thirds towards paper.
+ * @cssprop --rillage-font - Typeface of everything but the name. Default: the page's.
+ * @cssprop --rillage-font-sentence - Typeface of the name. Default: the system's serif.
+ * @cssprop --rillage-size-1 - Size of labels, buttons and the table.
+ * @cssprop --rillage-size-2 - Size of running text.
+ * @cssprop --rillage-size-3 - Size of the name.
+ * @cssprop --rillage-age-1 - Colour of water younger than a week. Six colours, light to dark, mean age and nothing else.
+ * @cssprop --rillage-age-2 - Colour of water a week to a month old.
+ * @cssprop --rillage-age-3 - Colour of water a month to a season old.
+ * @cssprop --rillage-age-4 - Colour of water a season to a year old.
+ * @cssprop --rillage-age-5 - Colour of water one to ten years old.
+ * @cssprop --rillage-age-6 - Colour of water older than ten years.
+ * @fires {CustomEvent<{at: string | null}>} rillage-cursor - When the cursor moves: the ISO instant it stands at, or null. Bubbles, composed; other elements in the same station follow.
+ */
+export class RillageAgeHistory extends LitElement {
+  /** Version of the package this class came from. */
+  static readonly version = version;
+
+  static override styles = [theme, buttonStyles, inkStyles, tableStyles, frameStyles, ageHistoryStyles];
+
+  static override properties = {
+    below: { type: String, reflect: true },
+    table: { type: Boolean, reflect: true },
+    timeZone: { type: String, attribute: 'time-zone' },
+    history: { attribute: false },
+    samples: { attribute: false },
+    messages: { attribute: false },
+    size: { state: true },
+    span: { state: true },
+    drag: { state: true },
+    linked: { state: true },
+  };
+
+  /** What is drawn beneath the flow: `shares` (default), `median`, or the name of a tracer. */
+  declare below: string;
+  /** Whether the data table is shown on the screen; on paper it always is. */
+  declare table: boolean;
+  /** IANA zone in which days and times are named. Default `UTC`. */
+  declare timeZone: string;
+  /** A history handed over directly; goes before the one of the station around. */
+  declare history: StationHistory | null;
+  /** Bottles to draw on their tracer. */
+  declare samples: Sample[] | null;
+  /** Messages of this element to replace, by key. */
+  declare messages: Messages | undefined;
+  declare private size: { width: number; em: number };
+  /** Steps shown; null: all of them. */
+  declare private span: Span | null;
+  declare private drag: { from: number; to: number } | null;
+  /** Moment another element of the station points at. */
+  declare private linked: string | null;
+
+  #language = new Language(this, ageHistoryMessages);
+  #link = new StationLink(this);
+  #cursorLink = new CursorLink(this, (at) => (this.linked = at));
+  #table = new DataTable(this, this.#language);
+  #stops: number[] = [];
+  #drawn: StationHistory | null = null;
+  #frame: Frame | null = null;
+  #said: string | null = null;
+  #still: Still | null = null;
+  #cursor = new Cursor(this, () => ({
+    series: this.#drawn ? bandsOf(this.#drawn).length + 2 : 0,
+    points: () => this.#stops.length,
+    describe: (series, point) => (this.#drawn ? readAt(this.#language, this.#drawn, series, this.#stops[point]!, this.timeZone) : ''),
+  }));
+  #observer: ResizeObserver | undefined;
+
+  constructor() {
+    super();
+    this.below = 'shares';
+    this.table = false;
+    this.timeZone = 'UTC';
+    this.history = null;
+    this.samples = null;
+    this.size = { width: 640, em: 13 };
+    this.span = null;
+    this.drag = null;
+    this.linked = null;
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    this.#observer = new ResizeObserver(() => requestAnimationFrame(() => this.#measure()));
+    this.#observer.observe(this);
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.#observer?.disconnect();
+    this.#observer = undefined;
+    removeEventListener('pointerup', this.#release);
+  }
+
+  override render(): TemplateResult {
+    const view = this.history ? null : this.#link.view;
+    const reading = view?.reading;
+    // A dry day withholds its reading; every other reason holds for the history too.
+    const withheld = reading?.status === 'withheld' && reading.withheld.some(({ code }) => code !== 'noOutflow');
+    const history = asHistory(this.history ?? (withheld ? null : view?.station?.history));
+    this.#drawn = history;
+    if (!history) return html`<slot></slot>`;
+    const language = this.#language;
+    const say = (key: AgeHistoryKey): string => language.say(key);
+    const span = this.#spanOf(history);
+    const { picture, table, summary: words, frame } = this.#stillParts(history, span);
+    const { series } = this.#cursor;
+    const point = this.#cursor.point !== null && this.#cursor.point < this.#stops.length ? this.#cursor.point : null;
+    const step = point === null ? this.#linkedStep(history, span) : this.#stops[point]!;
+    return html`<div lang=${language.tag} dir=${language.direction}>
+      ${chartFrame({
+        name: say('history.name'),
+        ...(view?.station?.invented ? { note: say('history.invented') } : {}),
+        summary: words,
+        buttons: this.#buttons(history, span),
+        picture: html`${svg`<svg viewBox="0 0 ${frame.width} ${frame.height}" aria-hidden="true" focusable="false">
+          ${picture}
+          ${this.drag ? svg`<rect class="chosen" x=${Math.min(this.drag.from, this.drag.to)} width=${Math.abs(this.drag.to - this.drag.from)} y=${frame.upper.top} height=${frame.lower.bottom - frame.upper.top} />` : nothing}
+          ${
+            step === null
+              ? nothing
+              : ['cursor under', 'cursor'].map(
+                  (name) =>
+                    svg`<line class=${name} x1=${frame.x(step)} x2=${frame.x(step)} y1=${frame.upper.top} y2=${frame.lower.bottom} />`,
+                )
+          }
+        </svg>`}${this.#legend(history)}`,
+        readout: step === null ? this.#about(history) : readAt(language, history, point === null ? 0 : series, step, this.timeZone),
+        cursor: this.#cursor,
+        onPointerMove: this.#pointer,
+        table: this.#table.render({ caption: say('history.name'), ...table }),
+        showsTable: this.table,
+        onToggleTable: () => (this.table = !this.table),
+        say,
+      })}
+    </div>`;
+  }
+
+  protected override updated(): void {
+    this.#measure();
+    const { point } = this.#cursor;
+    const step = point === null ? undefined : this.#stops[point];
+    const at = step === undefined || !this.#drawn ? null : new Date(endOf(this.#drawn, step)).toISOString();
+    if (at === this.#said) return;
+    this.#said = at;
+    this.linked = null;
+    this.#cursorLink.say(at);
+  }
+
+  /** What the cursor does not change, kept between its moves. */
+  #stillParts(history: StationHistory, span: Span): Still & { frame: Frame } {
+    const from = [history, this.samples, this.below, this.size, span.from, span.to, this.#language.tag, this.messages, this.timeZone];
+    if (!this.#still?.from.every((value, index) => value === from[index]) || !this.#frame) {
+      const frame = frameOf(this.size.width, this.size.em, span.from, span.to);
+      this.#frame = frame;
+      this.#stops = stopsOf(span.from, span.to);
+      const most = history.flow.slice(span.from, span.to).reduce<number>((high, flow) => Math.max(high, flow ?? 0), 0) || 1;
+      const below = this.#belowOf(history);
+      const language = this.#language;
+      const title =
+        below === 'shares' ? language.say('history.shares') : below === 'median' ? language.say('history.median') : cleanText(below, 40);
+      this.#still = {
+        from,
+        picture: svg`
+          ${stackPanel(history, frame, frame.upper, most, false)}
+          ${
+            below === 'shares'
+              ? stackPanel(history, frame, frame.lower, 1, true)
+              : below === 'median'
+                ? medianPanel(history, frame, this.#marks())
+                : tracerPanel(history, frame, below, asSamples(this.samples), language)
+          }
+          ${axesOf(history, frame, language, most, title, below === 'shares')}`,
+        table: historyRows(language, history, this.#stops, this.timeZone),
+        summary: summary(language, history, span, this.timeZone),
+      };
+    }
+    return { ...this.#still, frame: this.#frame };
+  }
+
+  #marks(): { days: number; label: string }[] {
+    return [7, 30.4375, 91.3125, 365.25, 1826.25, 3652.5].map((days) => ({ days, label: age(this.#language, days) }));
+  }
+
+  #belowOf(history: StationHistory): string {
+    return this.below === 'median' || Object.hasOwn(history.concentration, this.below) ? this.below : 'shares';
+  }
+
+  #spanOf({ flow }: StationHistory): Span {
+    const { span } = this;
+    return span && span.to <= flow.length ? span : { from: 0, to: flow.length };
+  }
+
+  #linkedStep(history: StationHistory, { from, to }: Span): number | null {
+    if (this.linked === null) return null;
+    const step = stepAtTime(history, Date.parse(this.linked));
+    return step >= from && step < to ? step : null;
+  }
+
+  #about(history: StationHistory): string {
+    const below = this.#belowOf(history);
+    if (below === 'shares') return this.#language.say('history.aboutShares');
+    if (below === 'median') return this.#language.say(history.medianLow ? 'history.aboutMedian' : 'history.aboutMedianBare');
+    return this.#language.say(asSamples(this.samples).some(({ tracer }) => tracer === below) ? 'history.aboutTracer' : 'history.noSamples');
+  }
+
+  #legend(history: StationHistory): TemplateResult {
+    return html`<ul class="legend" part="legend" aria-hidden="true">
+      ${bandsOf(history).map(
+        (band) =>
+          html`<li>
+            ${svg`<svg viewBox="0 0 16 9" aria-hidden="true">${
+              band.className
+                ? svg`<rect class=${band.className} x="0.5" y="0.5" width="15" height="8" />`
+                : svg`<path class="hatch" d=${hatchPath(0, 0, 16, 9, 4)} /><rect x="0.5" y="0.5" width="15" height="8" fill="none" />`
+            }</svg>`}${bandName(this.#language, band)}
+          </li>`,
+      )}
+    </ul>`;
+  }
+
+  #buttons(history: StationHistory, span: Span): TemplateResult {
+    const say = (key: AgeHistoryKey): string => this.#language.say(key);
+    const below = this.#belowOf(history);
+    const steps = history.flow.length;
+    const choice = (name: string, label: string): TemplateResult =>
+      html`<button type="button" part="button" aria-pressed=${below === name} @click=${() => (this.below = name)}>${label}</button>`;
+    const zoom = (key: AgeHistoryKey, to: Span): TemplateResult =>
+      html`<button
+        type="button"
+        part="button"
+        ?disabled=${to.from === span.from && to.to === span.to}
+        @click=${() => this.#show(to, steps)}
+      >
+        ${say(key)}
+      </button>`;
+    return html`<span role="group" class="buttons bare" aria-label=${say('history.below')}
+        >${choice('shares', say('history.shares'))}${choice('median', say('history.median'))}${Object.keys(history.concentration).map((name) => choice(name, cleanText(name, 40)))}</span
+      ><span role="group" class="buttons bare" aria-label=${say('history.window')}
+        >${zoom('history.closer', changed(span, steps, 0.5))}${zoom('history.wider', changed(span, steps, 2))}${zoom('history.earlier', changed(span, steps, 1, -0.5))}${zoom('history.later', changed(span, steps, 1, 0.5))}${zoom('history.all', { from: 0, to: steps })}</span
+      >`;
+  }
+
+  #show(span: Span, steps: number): void {
+    this.span = span.from === 0 && span.to === steps ? null : span;
+    this.#cursor.show(null);
+  }
+
+  /** A hover moves the cursor, a drag chooses a span. */
+  #pointer = (event: PointerEvent): void => {
+    const box = this.renderRoot.querySelector('.picture > svg')?.getBoundingClientRect();
+    const frame = this.#frame;
+    if (!box?.width || !frame || !this.#drawn) return;
+    const x = Math.max(frame.left, Math.min(frame.right, ((event.clientX - box.left) / box.width) * frame.width));
+    if (event.type === 'pointerdown' && event.button === 0) {
+      this.drag = { from: x, to: x };
+      addEventListener('pointerup', this.#release);
+      addEventListener('pointercancel', this.#release);
+    } else if (this.drag && event.buttons & 1) {
+      this.drag = { ...this.drag, to: x };
+    }
+    const step = frame.stepAt(x);
+    const stride = (this.#stops[1] ?? 1) - (this.#stops[0] ?? 0);
+    this.#cursor.show(Math.max(0, Math.min(this.#stops.length - 1, Math.round((step - frame.from) / (stride || 1)))), 0);
+  };
+
+  #release = (event: Event): void => {
+    removeEventListener('pointerup', this.#release);
+    removeEventListener('pointercancel', this.#release);
+    const { drag } = this;
+    this.drag = null;
+    const frame = this.#frame;
+    if (!drag || !frame || !this.#drawn || event.type === 'pointercancel' || Math.abs(drag.to - drag.from) < leastDrag) return;
+    const [from, to] = [frame.stepAt(Math.min(drag.from, drag.to)), frame.stepAt(Math.max(drag.from, drag.to)) + 1];
+    this.#show(changed({ from, to }, this.#drawn.flow.length, 1), this.#drawn.flow.length);
+  };
+
+  #measure(): void {
+    if (!this.isConnected) return;
+    const width = Math.round(this.clientWidth);
+    const text = this.renderRoot.querySelector('.readout');
+    const em = text ? parseFloat(getComputedStyle(text).fontSize) || 13 : 13;
+    if (width > 0 && (width !== this.size.width || em !== this.size.em)) this.size = { width, em };
+  }
+}
+
+/** What the cursor does not change, with what it was made from. */
+interface Still {
+  from: unknown[];
+  picture: TemplateResult;
+  table: { columns: string[]; rows: string[][] };
+  summary: string;
+}
+
+// px; less is a click
+const leastDrag = 8;
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'rillage-age-history': RillageAgeHistory;
+  }
+}

@@ -1,0 +1,4 @@
+import { define } from '../shared/define.js';
+import { RillageColumnView } from './rillage-column-view.js';
+
+define('rillage-column-view', RillageColumnView);

@@ -1,0 +1,4 @@
+import { define } from '../shared/define.js';
+import { RillageExplorer } from './rillage-explorer.js';
+
+define('rillage-explorer', RillageExplorer);
