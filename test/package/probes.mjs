@@ -33,7 +33,8 @@ const catchment = {
 const options = { youngerThan: [7, 30, 90], quantiles: [0.5] };
 const run = runColumn(catchment, forcing, options);
 const { youngerShare, quantiles, preRecordShare, concentration } = run.outflows.discharge;
-const resumed = resumeColumn(JSON.parse(JSON.stringify(run.checkpoint())), forcing, options);
+const next = { ...forcing, start: new Date(Date.parse(forcing.start) + steps * 86400000).toISOString() };
+const resumed = resumeColumn(JSON.parse(JSON.stringify(run.checkpoint())), next, options);
 console.log(JSON.stringify({
   storage: [...run.storage],
   younger: [...youngerShare.values()].map((each) => [...each]),

@@ -20,7 +20,14 @@ export function budgets() {
     {
       name: 'reading alone',
       limitKb: 12,
-      later: [languages],
+      later: [languages, fullForm],
+      bundle: elementBundle('rillage-reading', of('rillage-reading')),
+      without: [/uplot/, engine, outside('sdk', 'elements', 'lit')],
+    },
+    {
+      name: 'station and reading',
+      limitKb: 16,
+      later: [languages, fullForm],
       bundle: elementBundle('rillage-reading', of('rillage-station', 'rillage-reading')),
       without: [/uplot/, engine, outside('sdk', 'elements', 'lit', 'idb-keyval')],
     },
@@ -64,6 +71,9 @@ function core() {
 
 /** Messages of the languages other than English. */
 const languages = /elements[\\/]dist[\\/]languages[\\/]/;
+
+/** What the reading fetches for its full form, and for sentences in another language than the file's. */
+const fullForm = /elements[\\/]dist[\\/]rillage-reading[\\/](compose|compose-messages|details|numbers|evidence|strip)\.js/;
 
 const room = (...names) => new RegExp(`packages[\\\\/]sdk[\\\\/]dist[\\\\/](${names.join('|')})[\\\\/]`);
 

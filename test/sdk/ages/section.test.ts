@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { RillageError, runColumn, type Catchment, type ColumnRun, type Forcing } from '@rillage/sdk';
+import { type RillageError, runColumn, type Catchment, type ColumnRun, type Forcing } from '@rillage/sdk';
 import { makeSection, sectionSteps, type Section } from '../../../packages/sdk/src/ages/section.js';
 import { anySelection, FEW, forcingOf, STORAGE, weather } from '../column/support/arbitraries.js';
 import { syntheticForcing } from '../../bench/forcing.mjs';

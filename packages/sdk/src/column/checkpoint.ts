@@ -1,6 +1,7 @@
 import type { Catchment, Checkpoint } from '../contract.js';
 import { RillageError, shorten, type Issue } from '../errors.js';
 import type { ColumnRunner } from './runner.js';
+import { parseInstant } from './validate.js';
 
 /** A parcel that an earlier run followed: kept apart from its neighbours, as that run kept it. */
 const FOLLOWED_BEFORE = 0x7fffffff;
@@ -116,7 +117,10 @@ export function checkCheckpoint(data: unknown): asserts data is Checkpoint {
   const { steps, stepDays, ageResolution, catchment, state } = data;
   if (!(Number.isInteger(steps) && Number(steps) > 0)) fail('checkpoint.steps', 'a whole number of steps', steps);
   if (!(typeof stepDays === 'number' && stepDays > 0)) fail('checkpoint.stepDays', 'a number of days above 0', stepDays);
-  if (!(typeof ageResolution === 'number' && ageResolution >= 0)) fail('checkpoint.ageResolution', 'a number of 0 or more', ageResolution);
+  if (!(typeof ageResolution === 'number' && ageResolution >= 0 && ageResolution <= 0.5)) {
+    fail('checkpoint.ageResolution', 'a number from 0 to 0.5', ageResolution);
+  }
+  if (Number.isNaN(parseInstant(data['recordStart']))) fail('checkpoint.recordStart', 'an ISO 8601 instant', data['recordStart']);
   if (!record(catchment)) return fail('checkpoint.catchment', 'a catchment', catchment);
   if (!record(state)) return fail('checkpoint.state', 'the state of a column', state);
   for (const key of SCALARS) if (!Number.isFinite(state[key])) fail(`checkpoint.state.${key}`, 'a finite number', state[key]);
@@ -134,6 +138,23 @@ export function checkCheckpoint(data: unknown): asserts data is Checkpoint {
   const clock = state['clockTimes'];
   checkList(clock, Array.isArray(clock) ? clock.length : -1, 'clockTimes', fail);
   checkList(state['clockAmounts'], (clock as unknown[]).length, 'clockAmounts', fail);
+  checkAmounts(state as Checkpoint['state'], count, fail);
+}
+
+/** Depths of 0 or more that add up to total storage, Ω within 0 and 1, and assumed parcels among those there are. */
+function checkAmounts(state: Checkpoint['state'], count: number, fail: (path: string, expected: string, received: unknown) => never): void {
+  const depth = state['depth'] as number[];
+  const total = state['total'] as number;
+  const preRecord = state['preRecord'] as number;
+  if (depth.some((mm) => mm < 0) || preRecord < 0) fail('checkpoint.state.depth', 'depths of 0 mm or more', depth);
+  const stored = depth.reduce((sum, mm) => sum + mm, preRecord);
+  if (!(Math.abs(stored - total) <= 1e-6 * Math.max(1, total)))
+    fail('checkpoint.state.total', `${stored} mm, the sum of what is stored`, total);
+  const share = state['lastShare'] as number[];
+  if (share.some((value) => value < -0.5 || value > 1.5)) fail('checkpoint.state.lastShare', 'shares', share);
+  const assumed = state['assumed'] as number;
+  if (!(Number.isInteger(assumed) && assumed >= 0 && assumed <= count))
+    fail('checkpoint.state.assumed', `a whole number up to ${count}`, assumed);
 }
 
 function checkList(list: unknown, length: number, key: string, fail: (path: string, expected: string, received: unknown) => never): void {

@@ -1,9 +1,9 @@
 /** Deviation from a straight line that may be forgotten, per mm that entered since: about the share of an outflow that it can misplace. */
-const FORGOTTEN = 1e-4;
+const FORGOTTEN = 1e-3;
 
 /**
  * Cumulative inflow against time, thinned with age where a straight line serves as well: it says how the rain was spread within a merged
- * parcel's entry interval, so that an age can be placed inside it. Its length grows with the logarithm of the record's.
+ * parcel's entry interval, so that an age can be placed inside it. Its length grows much more slowly than the record: 1,262 points for 20 daily years.
  */
 export class InflowClock {
   /** Steps since the record began, increasing. */

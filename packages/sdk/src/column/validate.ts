@@ -219,6 +219,8 @@ export function describeDrivers(evaluator: SelectionEvaluator, forcing: Forcing)
 }
 
 export function describeOptions(options: RunOptions, steps: number): Issue[] {
+  if (typeof options !== 'object' || options === null)
+    return [{ code: 'option', path: 'options', expected: 'options by name', received: shorten(options) }];
   const issues: Issue[] = [];
   describeFields(options, OPTION_FIELDS, 'options', issues);
   const each = (

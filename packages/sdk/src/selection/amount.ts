@@ -10,6 +10,8 @@ export interface Domain {
 }
 
 export const POSITIVE: Domain = { low: 0, high: Infinity, open: true, words: 'a finite number above 0' };
+/** Depths in mm that something is divided by. */
+export const DEPTH: Domain = { low: 1e-6, high: 1e9, open: false, words: 'a finite depth in mm, 0.000001 or more' };
 export const NOT_NEGATIVE: Domain = { low: 0, high: Infinity, open: false, words: 'a finite number of 0 or more' };
 export const SHARE: Domain = { low: 0, high: 1, open: false, words: 'a number from 0 to 1' };
 

@@ -1,4 +1,4 @@
-import { POSITIVE } from './amount.js';
+import { DEPTH } from './amount.js';
 import type { Curve } from './curve.js';
 import { piece, type FormDefinition } from './form.js';
 
@@ -17,6 +17,6 @@ export const exponential: FormDefinition = {
   form: 'exponential',
   fields: ['scale'],
   compile: (data, path, amounts, weights) => [
-    piece(weights, { curve: exponentialCurve, scale: amounts.add(data['scale'], `${path}.scale`, POSITIVE) }),
+    piece(weights, { curve: exponentialCurve, scale: amounts.add(data['scale'], `${path}.scale`, DEPTH) }),
   ],
 };

@@ -1,6 +1,6 @@
 import { gammaP } from '../numeric/gamma.js';
 import { logGamma } from '../numeric/logGamma.js';
-import { NOT_NEGATIVE, POSITIVE } from './amount.js';
+import { DEPTH, NOT_NEGATIVE, POSITIVE } from './amount.js';
 import type { Curve } from './curve.js';
 import { piece, type FormDefinition } from './form.js';
 
@@ -34,7 +34,7 @@ export const gamma: FormDefinition = {
   fields: ['shape', 'scale', 'from'],
   compile(data, path, amounts, weights) {
     const p = amounts.add(data['shape'], `${path}.shape`, POSITIVE);
-    const scale = amounts.add(data['scale'], `${path}.scale`, POSITIVE);
+    const scale = amounts.add(data['scale'], `${path}.scale`, DEPTH);
     if (data['from'] === undefined || data['from'] === 0) return [piece(weights, { curve: gammaCurve, scale, p })];
     return [piece(weights, { curve: gammaFromCurve, scale, p, from: amounts.add(data['from'], `${path}.from`, NOT_NEGATIVE) })];
   },

@@ -1,4 +1,4 @@
-import { POSITIVE } from './amount.js';
+import { DEPTH } from './amount.js';
 import type { Curve } from './curve.js';
 import { piece, type FormDefinition } from './form.js';
 
@@ -26,6 +26,6 @@ export const uniform: FormDefinition = {
   fields: ['depth'],
   compile(data, path, amounts, weights) {
     if (data['depth'] === undefined) return [piece(weights, { curve: overTotal })];
-    return [piece(weights, { curve: overDepth, scale: amounts.add(data['depth'], `${path}.depth`, POSITIVE) })];
+    return [piece(weights, { curve: overDepth, scale: amounts.add(data['depth'], `${path}.depth`, DEPTH) })];
   },
 };

@@ -33,7 +33,7 @@ export function meanOfDecay(x: number): number {
 /**
  * Ratio of concentrations after and before a parcel went from depth `before` to `after` while a share `kept` of the concentration
  * stayed behind: (before/after)^kept. Exact at kept = 0 and 1; in between a second-order rational form where little is taken
- * (relative error below 1e-5), the power itself where much is.
+ * (relative error below 2e-5), the power itself where much is.
  */
 export function enrichment(before: number, after: number, kept: number): number {
   if (kept === 0) return 1;
