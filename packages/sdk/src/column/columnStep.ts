@@ -25,6 +25,8 @@ export class ColumnStep {
   private readonly above: Float64Array;
   private readonly loss: Float64Array;
   private readonly added: Float64Array;
+  /** Whether one parcel alone decides, so that a boundary's small drift would show: then the integrator moves all of them. */
+  careful = false;
   private lastInflow = 0;
 
   constructor(
@@ -62,7 +64,8 @@ export class ColumnStep {
    * @param flux     [outflows] mm/day
    */
   advance(state: ColumnState, enters: boolean, inflow: number, flux: Float64Array, days: number): void {
-    const { above, fast } = this;
+    const { above } = this;
+    const fast = this.careful ? null : this.fast;
     const outflows = state.outflows;
     const totalBefore = state.total;
     let out = 0;
@@ -75,7 +78,8 @@ export class ColumnStep {
         const stretch = Math.abs(totalAfter - totalBefore) / Math.min(totalBefore, totalAfter);
         fast.setStep(Math.max(inflow, out), Math.max(this.lastInflow, out), flux, days, stretch);
       }
-      this.integrator.setStep(days, inflow, flux, totalBefore, this.tolerance, this.largestPart);
+      const tolerance = this.careful ? Math.min(this.tolerance, UNEVEN_TOLERANCE) : this.tolerance;
+      this.integrator.setStep(days, inflow, flux, totalBefore, tolerance, this.largestPart);
       let edge = 0;
       let i = state.count - 1;
       if (enters) {

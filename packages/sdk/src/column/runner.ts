@@ -12,8 +12,8 @@ export const DEFAULT_AGE_RESOLUTION = 0.05;
 /** Steps between passes that merge parcels and thin the clock; counted from the record's start, so that it never depends on who runs it. */
 const MERGE_EVERY = 8;
 const THIN_EVERY = 64;
-/** Share of storage below which pre-record water counts as about to run out, and share of an outflow that counts as a lump. */
-const NEARLY_GONE = 0.5;
+/** Share of storage below which pre-record water counts as running short, and share of an outflow that counts as a lump. */
+const NEARLY_GONE = 0.9;
 const LUMP = 0.1;
 /**
  * A parcel that is enriched or reacts is no longer alike within itself. Steps whose inflow feeds a large share of an outflow are cut into
@@ -145,6 +145,7 @@ export class ColumnRunner {
     if (!evaluator.steady) evaluator.setStep(k, this.driver);
     for (const mass of this.masses) mass.fill(0);
     this.preTaken.fill(0);
+    this.step.careful = this.oneParcelDecides();
     const parts = this.reacts && inflow > 0 ? this.partsFor(inflow * forcing.stepDays) : 1;
     const days = forcing.stepDays / parts;
     if (parts > 1) this.takenBefore.fill(0);
@@ -171,7 +172,7 @@ export class ColumnRunner {
   }
 
   private tidy(now: number): void {
-    if (now % MERGE_EVERY === 0) this.state.merge(now, this.oneParcelDecides() ? 0 : this.ageResolution, this.step.largestMerged);
+    if (now % MERGE_EVERY === 0) this.state.merge(now, this.step.careful ? 0 : this.ageResolution, this.step.largestMerged);
     if (now % THIN_EVERY === 0) this.clock?.thin();
   }
 
