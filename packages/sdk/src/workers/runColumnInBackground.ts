@@ -1,7 +1,7 @@
 import type { CallOptions, Catchment, Checkpoint, ColumnRun, Forcing, RunOptions } from '../contract.js';
 import { finishColumn } from '../column/index.js';
 import { RillageError, throwIfAborted } from '../errors.js';
-import { openPool } from './pool.js';
+import { openPool, type Pool } from './pool.js';
 import { inSlices } from './slices.js';
 import { received, runnerOf, type ColumnPayload, type SentRun } from './tasks.js';
 import type { WorkerSource } from './threads.js';
@@ -26,7 +26,7 @@ export async function runColumnInBackground(
 ): Promise<ColumnRun> {
   throwIfAborted(call.signal);
   const payload: ColumnPayload = 'kind' in model ? { checkpoint: model, forcing, options } : { catchment: model, forcing, options };
-  const pool = call.worker === false ? null : await openPool(1, { worker: call.worker });
+  const pool = call.worker === false ? null : await openUnlessAborted(call.worker, call.signal);
   if (pool === null) return onThisThread(payload, call);
   const stop = (): void => pool.close();
   call.signal?.addEventListener('abort', stop, { once: true });
@@ -40,6 +40,25 @@ export async function runColumnInBackground(
   } finally {
     call.signal?.removeEventListener('abort', stop);
     pool.close();
+  }
+}
+
+/** A pool of one; a signal raised while it opens is answered at once, and the worker ended when it comes. */
+async function openUnlessAborted(worker: WorkerSource, signal: AbortSignal | undefined): Promise<Pool | null> {
+  const opening = openPool(1, { worker });
+  if (signal === undefined) return opening;
+  let raise: () => void = () => undefined;
+  const aborted = new Promise<never>((_resolve, reject) => {
+    raise = () => {
+      void opening.then((pool) => pool?.close());
+      reject(new RillageError({ code: 'aborted', hint: 'The caller ended this call through its signal.' }, { cause: signal.reason }));
+    };
+    signal.addEventListener('abort', raise, { once: true });
+  });
+  try {
+    return await Promise.race([opening, aborted]);
+  } finally {
+    signal.removeEventListener('abort', raise);
   }
 }
 

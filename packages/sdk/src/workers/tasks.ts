@@ -14,7 +14,7 @@ export interface ColumnPayload {
 /** A run as it can cross to another thread: its checkpoint taken, since a function cannot. */
 export type SentRun = Omit<ColumnRun, 'checkpoint'> & { taken: Checkpoint };
 
-const STEPS_PER_REPORT = 2000;
+const STEPS_PER_REPORT = 500;
 
 /** By name; rooms further down the flow add theirs through {@link addTask}. */
 const TASKS = new Map<string, Task>([['column', columnTask]]);
