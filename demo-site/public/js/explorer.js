@@ -5,7 +5,7 @@
 import { makeSection, runColumn, sectionSteps } from '../lib/rillage-sdk.min.js';
 
 const ages = [7, 30, 90, 365];
-const columns = { moving: 120, resting: 600 };
+const columns = { moving: 80, resting: 600 };
 
 const record = await (await fetch('./data/thessle-brook-record.json')).json();
 const forcing = inFloats(record.forcing);
@@ -23,8 +23,14 @@ explorer.catchment = record.catchment;
 /** One run of the model, as the elements take it. */
 export function trial({ catchment, settled }) {
   const kept = sectionSteps(steps, settled ? columns.resting : columns.moving);
-  const run = runColumn(catchment, forcing, { snapshotsAt: kept, youngerThan: ages, quantiles: [0.5], distributionsAt: [last] });
-  const section = makeSection(run, { units: { [record.tracer]: record.unit }, rows: settled ? 96 : 64 });
+  const run = runColumn(catchment, forcing, {
+    snapshotsAt: kept,
+    youngerThan: ages,
+    quantiles: [0.5],
+    distributionsAt: [last],
+    ...(settled ? {} : { ageResolution: 0.15 }),
+  });
+  const section = makeSection(run, { units: { [record.tracer]: record.unit }, rows: settled ? 96 : 48 });
   const stream = run.outflows.discharge;
   return { section, distribution: distributionOf(stream), history: historyOf(stream) };
 }

@@ -2,7 +2,10 @@ import { describe, expect, it } from 'vitest';
 import { readFileSync } from 'node:fs';
 import { messages as ar } from '../../../packages/elements/src/languages/ar.js';
 import { messages as de } from '../../../packages/elements/src/languages/de.js';
+import { ageHistoryMessages } from '../../../packages/elements/src/rillage-age-history/messages.js';
 import { agePlotMessages } from '../../../packages/elements/src/rillage-age-plot/messages.js';
+import { columnViewMessages } from '../../../packages/elements/src/rillage-column-view/messages.js';
+import { explorerMessages } from '../../../packages/elements/src/rillage-explorer/messages.js';
 import { composeMessages } from '../../../packages/elements/src/rillage-reading/compose-messages.js';
 import { detailsMessages } from '../../../packages/elements/src/rillage-reading/details-messages.js';
 import { readingMessages } from '../../../packages/elements/src/rillage-reading/messages.js';
@@ -10,7 +13,16 @@ import { stationMessages } from '../../../packages/elements/src/rillage-station/
 import { fill, type Message, type Messages } from '../../../packages/elements/src/shared/messages.js';
 import { version } from '../../../packages/elements/src/version.js';
 
-const english: Messages = { ...agePlotMessages, ...composeMessages, ...detailsMessages, ...readingMessages, ...stationMessages };
+const english: Messages = {
+  ...ageHistoryMessages,
+  ...columnViewMessages,
+  ...explorerMessages,
+  ...agePlotMessages,
+  ...composeMessages,
+  ...detailsMessages,
+  ...readingMessages,
+  ...stationMessages,
+};
 const texts = (message: Message): string[] => (typeof message === 'string' ? [message] : Object.values(message));
 const places = (message: Message): string[] =>
   [...new Set(texts(message).flatMap((text) => [...text.matchAll(/\{(\w+)\}/g)].map(([, name]) => name!)))].sort();

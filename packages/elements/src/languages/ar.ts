@@ -1,4 +1,5 @@
 import type { Messages } from '../shared/messages.js';
+import { throughTime } from './ar-through-time.js';
 
 /** Arabic, written from right to left. */
 export const messages: Messages = {
@@ -147,4 +148,6 @@ export const messages: Messages = {
   'station.truncated': 'الملف ناقص أو تالف.',
   'station.notStation': 'الملف ليس ملف محطة ({at}).',
   'station.newer': 'الملف من إصدار أحدث ({at}) مما تفهمه هذه الصفحة (1).',
+
+  ...throughTime,
 };

@@ -1,4 +1,5 @@
 import type { Messages } from '../shared/messages.js';
+import { throughTime } from './de-through-time.js';
 
 /** German. */
 export const messages: Messages = {
@@ -152,4 +153,6 @@ export const messages: Messages = {
   'station.truncated': 'Die Datei ist unvollständig oder beschädigt.',
   'station.notStation': 'Die Datei ist keine Stationsdatei ({at}).',
   'station.newer': 'Die Datei ist von neuerer Fassung ({at}), als diese Seite versteht (1).',
+
+  ...throughTime,
 };

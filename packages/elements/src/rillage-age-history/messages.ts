@@ -11,6 +11,7 @@ export const ageHistoryMessages = {
   'history.summary':
     'From {from} to {to}, oldest water at the base. Of all that flowed, {young} was younger than {limit}, and {beyond} was in the ground before the record began.',
   'history.flow': 'Stream, mm a day',
+  'history.flowMeans': 'Stream, mm a day, means over {days}',
   'history.shares': 'Shares',
   'history.median': 'Median age',
   'history.below': 'What is drawn beneath',
@@ -32,7 +33,6 @@ export const ageHistoryMessages = {
   'history.readMedianBeyond': '{date}: more than half of the water is older than the record.',
   'history.dry': '{date}: no flow.',
   'history.simulated': '{tracer}, simulated',
-  'history.sampled': '{tracer}, bottles',
   'history.aboutShares': 'Beneath: the same as shares of the flow. Drag across the picture, or use the buttons, to look closer.',
   'history.aboutMedian':
     'Beneath: the likely range of the median age. Hatched: older than the record. Drag across the picture, or use the buttons, to look closer.',

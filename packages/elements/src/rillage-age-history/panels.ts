@@ -6,36 +6,41 @@ import { timeMarks } from '../shared/time-axis.js';
 import { endOf, stepAtTime, type Frame } from './frame.js';
 import { hatchBetween } from './hatch-between.js';
 import type { AgeHistoryKey } from './messages.js';
-import { bandsOf, sharesAt, stepsToDraw } from './stack.js';
+import { bandsOf, stepsToDraw, type Piece } from './stack.js';
 
 export type Speech = Language<AgeHistoryKey>;
 type Panel = Frame['upper'];
 
 /** The stack: classes of age upon each other, the oldest at the base, as depths of flow or as shares. */
-export function stackPanel(history: StationHistory, frame: Frame, panel: Panel, most: number, asShares: boolean): TemplateResult {
-  const steps = stepsToDraw(history.flow, frame.from, frame.to, Math.max(1, Math.round(frame.right - frame.left)));
+export function stackPanel(
+  history: StationHistory,
+  frame: Frame,
+  pieces: Piece[],
+  panel: Panel,
+  most: number,
+  asShares: boolean,
+): TemplateResult {
   const bands = bandsOf(history);
   const y = (value: number): number => panel.bottom - (value / most) * (panel.bottom - panel.top);
-  const shares = steps.map((step) => sharesAt(history, step));
-  const wholes = steps.map((step) => (asShares ? 1 : (history.flow[step] ?? 0)));
+  const near = pieces.length === frame.to - frame.from;
   // Heights of each class's lower edge; the pre-record water stands at the base.
-  const below = steps.map(() => 0);
+  const below = pieces.map(() => 0);
+  const edge = (): [x: number, y: number][] => pieces.map(({ at }, index) => [frame.x(at), y(below[index]!)]);
   const areas: TemplateResult[] = [];
   for (let band = bands.length - 1; band >= 0; band--) {
-    const lower = steps.map((step, index) => point(frame.x(step), y(below[index]!)));
-    steps.forEach((_, index) => (below[index]! += (shares[index]?.[band] ?? 0) * wholes[index]!));
-    const upper = steps.map((step, index) => point(frame.x(step), y(below[index]!)));
-    const d = `M${upper.join('L')}L${lower.reverse().join('L')}Z`;
+    const lower = edge();
+    pieces.forEach(({ flow, shares }, index) => (below[index]! += (shares?.[band] ?? 0) * (asShares ? 1 : flow)));
+    const upper = edge();
+    const line = upper.map(([x, at]) => point(x, at)).join('L');
     areas.push(
       bands[band]!.className
-        ? svg`<path class="area ${bands[band]!.className}" d=${d} />`
-        : svg`<path class="hatch" d=${hatchBetween(steps.map((step, index) => [frame.x(step), y(below[index]!), panel.bottom]))} />`,
+        ? svg`<path class="area ${bands[band]!.className}" d=${`M${line}L${lower
+            .reverse()
+            .map(([x, at]) => point(x, at))
+            .join('L')}Z`} />`
+        : svg`<path class="hatch" d=${hatchBetween(upper.map(([x, at]) => [x, at, panel.bottom]))} />`,
+      svg`<path class=${band === 0 ? 'line thin' : near || band === bands.length - 1 ? 'between near' : 'between'} d=${`M${line}`} />`,
     );
-    if (band === 0) areas.push(svg`<path class="line thin" d=${`M${upper.join('L')}`} />`);
-    else
-      areas.push(
-        svg`<path class=${steps.length * 3 < frame.right - frame.left ? 'between near' : 'between'} d=${`M${upper.join('L')}`} />`,
-      );
   }
   return svg`${areas}`;
 }
@@ -58,7 +63,7 @@ export function medianPanel(history: StationHistory, frame: Frame, marks: { days
       .filter(({ days }) => days > low && days < high)
       .map(
         ({ days, label }) => svg`<line class="hair" x1=${left} x2=${right} y1=${y(days)} y2=${y(days)} />
-        <text class="end" x=${left - 0.5 * em} y=${y(days) + 0.35 * em}>${label}</text>`,
+        <text x=${left + 0.4 * em} y=${y(days) - 0.35 * em}>${label}</text>`,
       )}
     ${runs.map((run) =>
       medianLow && medianHigh
@@ -109,7 +114,7 @@ export function axesOf(
   frame: Frame,
   speech: Speech,
   mostFlow: number,
-  lowerTitle: string,
+  titles: { upper: string; lower: string },
   asShares: boolean,
 ): TemplateResult {
   const { em, left, right, upper, lower } = frame;
@@ -117,8 +122,8 @@ export function axesOf(
   const format = number(speech.tag, { maximumSignificantDigits: 3 });
   const y = (value: number): number => upper.bottom - (value / mostFlow) * (upper.bottom - upper.top);
   return svg`
-    <text x=${left} y=${upper.top - 0.6 * em}>${speech.say('history.flow')}</text>
-    <text x=${left} y=${lower.top - 0.6 * em}>${lowerTitle}</text>
+    <text x=${left} y=${upper.top - 0.6 * em}>${titles.upper}</text>
+    <text x=${left} y=${lower.top - 0.6 * em}>${titles.lower}</text>
     ${ticks(0, mostFlow).map(
       (value) => svg`<line class="tick" x1=${left - 0.4 * em} x2=${left} y1=${y(value)} y2=${y(value)} />
         <text class="end" x=${left - 0.6 * em} y=${y(value) + 0.35 * em}>${format.format(value)}</text>`,

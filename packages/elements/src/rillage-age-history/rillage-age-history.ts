@@ -5,8 +5,7 @@ import { chartFrame, frameStyles } from '../shared/chart-frame.js';
 import { CursorLink } from '../shared/cursor-link.js';
 import { Cursor } from '../shared/cursor.js';
 import { DataTable, tableStyles } from '../shared/data-table.js';
-import { age } from '../shared/format.js';
-import { hatchPath } from '../shared/hatch.js';
+import { age, dayCount } from '../shared/format.js';
 import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
@@ -14,13 +13,14 @@ import { StationLink } from '../shared/station-link.js';
 import { cleanText } from '../shared/text.js';
 import { theme } from '../shared/theme.js';
 import { version } from '../version.js';
+import { companions, legend, zoomButtons } from './controls.js';
 import { asHistory, asSamples } from './check.js';
 import { changed, endOf, frameOf, stepAtTime, type Frame, type Span } from './frame.js';
 import { ageHistoryMessages, type AgeHistoryKey } from './messages.js';
 import { axesOf, medianPanel, stackPanel, tracerPanel } from './panels.js';
-import { bandsOf, stopsOf } from './stack.js';
+import { bandsOf, piecesOf, stepsAPiece, stopsOf } from './stack.js';
 import { ageHistoryStyles } from './styles.js';
-import { bandName, historyRows, readAt, summary } from './words.js';
+import { historyRows, readAt, summary } from './words.js';
 
 /**
  * The flow of the stream through time, split by the age of its water and stacked oldest at the base; beneath it the same as shares, the median
@@ -98,6 +98,8 @@ export class RillageAgeHistory extends LitElement {
   #stops: number[] = [];
   #drawn: StationHistory | null = null;
   #frame: Frame | null = null;
+  /** Whether the size of the text is known: it is read once there is text, then whenever the element's box changes. */
+  #measured = false;
   #said: string | null = null;
   #still: Still | null = null;
   #cursor = new Cursor(this, () => ({
@@ -153,7 +155,12 @@ export class RillageAgeHistory extends LitElement {
         name: say('history.name'),
         ...(view?.station?.invented ? { note: say('history.invented') } : {}),
         summary: words,
-        buttons: this.#buttons(history, span),
+        buttons: html`${companions(language, history, this.#belowOf(history), (name) => (this.below = name))}${zoomButtons(
+          language,
+          span,
+          history.flow.length,
+          (to) => this.#show(to, history.flow.length),
+        )}`,
         picture: html`${svg`<svg viewBox="0 0 ${frame.width} ${frame.height}" aria-hidden="true" focusable="false">
           ${picture}
           ${this.drag ? svg`<rect class="chosen" x=${Math.min(this.drag.from, this.drag.to)} width=${Math.abs(this.drag.to - this.drag.from)} y=${frame.upper.top} height=${frame.lower.bottom - frame.upper.top} />` : nothing}
@@ -165,7 +172,7 @@ export class RillageAgeHistory extends LitElement {
                     svg`<line class=${name} x1=${frame.x(step)} x2=${frame.x(step)} y1=${frame.upper.top} y2=${frame.lower.bottom} />`,
                 )
           }
-        </svg>`}${this.#legend(history)}`,
+        </svg>`}${legend(language, history)}`,
         readout: step === null ? this.#about(history) : readAt(language, history, point === null ? 0 : series, step, this.timeZone),
         cursor: this.#cursor,
         onPointerMove: this.#pointer,
@@ -178,7 +185,7 @@ export class RillageAgeHistory extends LitElement {
   }
 
   protected override updated(): void {
-    this.#measure();
+    if (!this.#measured) this.#measure();
     const { point } = this.#cursor;
     const step = point === null ? undefined : this.#stops[point];
     const at = step === undefined || !this.#drawn ? null : new Date(endOf(this.#drawn, step)).toISOString();
@@ -195,23 +202,29 @@ export class RillageAgeHistory extends LitElement {
       const frame = frameOf(this.size.width, this.size.em, span.from, span.to);
       this.#frame = frame;
       this.#stops = stopsOf(span.from, span.to);
-      const most = history.flow.slice(span.from, span.to).reduce<number>((high, flow) => Math.max(high, flow ?? 0), 0) || 1;
+      const each = stepsAPiece(span.from, span.to, frame.right - frame.left);
+      const pieces = piecesOf(history, span.from, span.to, each);
+      const most = pieces.reduce((high, { flow }) => Math.max(high, flow), 0) || 1;
       const below = this.#belowOf(history);
       const language = this.#language;
-      const title =
+      const upper =
+        each === 1
+          ? language.say('history.flow')
+          : language.say('history.flowMeans', { days: dayCount(language, Math.round(each * history.stepDays * 10) / 10) });
+      const lower =
         below === 'shares' ? language.say('history.shares') : below === 'median' ? language.say('history.median') : cleanText(below, 40);
       this.#still = {
         from,
         picture: svg`
-          ${stackPanel(history, frame, frame.upper, most, false)}
+          ${stackPanel(history, frame, pieces, frame.upper, most, false)}
           ${
             below === 'shares'
-              ? stackPanel(history, frame, frame.lower, 1, true)
+              ? stackPanel(history, frame, pieces, frame.lower, 1, true)
               : below === 'median'
                 ? medianPanel(history, frame, this.#marks())
                 : tracerPanel(history, frame, below, asSamples(this.samples), language)
           }
-          ${axesOf(history, frame, language, most, title, below === 'shares')}`,
+          ${axesOf(history, frame, language, most, { upper, lower }, below === 'shares')}`,
         table: historyRows(language, history, this.#stops, this.timeZone),
         summary: summary(language, history, span, this.timeZone),
       };
@@ -243,43 +256,6 @@ export class RillageAgeHistory extends LitElement {
     if (below === 'shares') return this.#language.say('history.aboutShares');
     if (below === 'median') return this.#language.say(history.medianLow ? 'history.aboutMedian' : 'history.aboutMedianBare');
     return this.#language.say(asSamples(this.samples).some(({ tracer }) => tracer === below) ? 'history.aboutTracer' : 'history.noSamples');
-  }
-
-  #legend(history: StationHistory): TemplateResult {
-    return html`<ul class="legend" part="legend" aria-hidden="true">
-      ${bandsOf(history).map(
-        (band) =>
-          html`<li>
-            ${svg`<svg viewBox="0 0 16 9" aria-hidden="true">${
-              band.className
-                ? svg`<rect class=${band.className} x="0.5" y="0.5" width="15" height="8" />`
-                : svg`<path class="hatch" d=${hatchPath(0, 0, 16, 9, 4)} /><rect x="0.5" y="0.5" width="15" height="8" fill="none" />`
-            }</svg>`}${bandName(this.#language, band)}
-          </li>`,
-      )}
-    </ul>`;
-  }
-
-  #buttons(history: StationHistory, span: Span): TemplateResult {
-    const say = (key: AgeHistoryKey): string => this.#language.say(key);
-    const below = this.#belowOf(history);
-    const steps = history.flow.length;
-    const choice = (name: string, label: string): TemplateResult =>
-      html`<button type="button" part="button" aria-pressed=${below === name} @click=${() => (this.below = name)}>${label}</button>`;
-    const zoom = (key: AgeHistoryKey, to: Span): TemplateResult =>
-      html`<button
-        type="button"
-        part="button"
-        ?disabled=${to.from === span.from && to.to === span.to}
-        @click=${() => this.#show(to, steps)}
-      >
-        ${say(key)}
-      </button>`;
-    return html`<span role="group" class="buttons bare" aria-label=${say('history.below')}
-        >${choice('shares', say('history.shares'))}${choice('median', say('history.median'))}${Object.keys(history.concentration).map((name) => choice(name, cleanText(name, 40)))}</span
-      ><span role="group" class="buttons bare" aria-label=${say('history.window')}
-        >${zoom('history.closer', changed(span, steps, 0.5))}${zoom('history.wider', changed(span, steps, 2))}${zoom('history.earlier', changed(span, steps, 1, -0.5))}${zoom('history.later', changed(span, steps, 1, 0.5))}${zoom('history.all', { from: 0, to: steps })}</span
-      >`;
   }
 
   #show(span: Span, steps: number): void {
@@ -320,6 +296,7 @@ export class RillageAgeHistory extends LitElement {
     if (!this.isConnected) return;
     const width = Math.round(this.clientWidth);
     const text = this.renderRoot.querySelector('.readout');
+    this.#measured = text !== null;
     const em = text ? parseFloat(getComputedStyle(text).fontSize) || 13 : 13;
     if (width > 0 && (width !== this.size.width || em !== this.size.em)) this.size = { width, em };
   }

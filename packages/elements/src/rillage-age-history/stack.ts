@@ -48,12 +48,47 @@ export function limitsOf({ younger }: StationHistory): number[] {
   return limits;
 }
 
+/** A piece of the stack: one step, or several where there are more than can be told apart. */
+export interface Piece {
+  /** Middle, in steps. */
+  at: number;
+  /** Mean over the piece, mm/day. */
+  flow: number;
+  /** Weighted by flow; null without outflow. */
+  shares: number[] | null;
+}
+
+/** Steps in a piece so that it is at least three pixels wide. */
+export const stepsAPiece = (from: number, to: number, pixels: number): number => Math.max(1, Math.ceil((3 * (to - from)) / pixels));
+
 /**
- * Steps to draw of a window: all of them where they have room, else the highest and the lowest flow of each pixel in their order, so that
- * no flood and no drought is lost and each keeps its own ages.
+ * A window in pieces of equally many steps, each with its mean flow and that water's own ages, so that areas are amounts of water.
  * @param from, to  first step and one past the last
  */
-export function stepsToDraw(flow: (number | null)[], from: number, to: number, pixels: number): number[] {
+export function piecesOf(history: StationHistory, from: number, to: number, each: number): Piece[] {
+  const pieces: Piece[] = [];
+  for (let first = from; first < to; first += each) {
+    const last = Math.min(to, first + each);
+    let flow = 0;
+    let sums: number[] | null = null;
+    for (let step = first; step < last; step++) {
+      const shares = sharesAt(history, step);
+      if (!shares) continue;
+      const here = history.flow[step]!;
+      flow += here;
+      sums ??= shares.map(() => 0);
+      shares.forEach((share, band) => (sums![band]! += share * here));
+    }
+    pieces.push({ at: (first + last - 1) / 2, flow: flow / (last - first), shares: sums && sums.map((sum) => sum / flow) });
+  }
+  return pieces;
+}
+
+/**
+ * Steps to draw of a line: all of them where they have room, else the highest and the lowest of each pixel in their order.
+ * @param from, to  first step and one past the last
+ */
+export function stepsToDraw(values: (number | null)[], from: number, to: number, pixels: number): number[] {
   const count = to - from;
   if (count <= 2 * pixels) return Array.from({ length: count }, (_, index) => from + index);
   const steps: number[] = [];
@@ -62,8 +97,8 @@ export function stepsToDraw(flow: (number | null)[], from: number, to: number, p
     const last = from + Math.floor(((pixel + 1) * count) / pixels);
     let [high, low] = [first, first];
     for (let step = first; step < last; step++) {
-      if ((flow[step] ?? 0) > (flow[high] ?? 0)) high = step;
-      if ((flow[step] ?? 0) < (flow[low] ?? 0)) low = step;
+      if ((values[step] ?? -Infinity) > (values[high] ?? -Infinity)) high = step;
+      if ((values[step] ?? Infinity) < (values[low] ?? Infinity)) low = step;
     }
     if (high === low) steps.push(high);
     else steps.push(Math.min(high, low), Math.max(high, low));

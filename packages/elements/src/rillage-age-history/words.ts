@@ -1,5 +1,6 @@
 import type { StationHistory } from '@rillage/sdk';
 import { age, ageSpan, moment, number, olderThan, percent } from '../shared/format.js';
+import { lazyRows } from '../shared/lazy-rows.js';
 import { cleanText } from '../shared/text.js';
 import { endOf, type Span } from './frame.js';
 import type { Speech } from './panels.js';
@@ -87,7 +88,8 @@ export function historyRows(
     speech.say('history.medianRange'),
     ...tracers.map((name) => speech.say('history.simulated', { tracer: cleanText(name, 40) })),
   ];
-  const rows = stops.map((step) => {
+  const rows = lazyRows(stops.length, (index) => {
+    const step = stops[index]!;
     const shares = sharesAt(history, step);
     const days = history.medianDays[step];
     return [

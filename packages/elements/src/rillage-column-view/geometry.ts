@@ -28,8 +28,8 @@ export interface Frame {
 
 export function frameOf(section: SectionData, width: number, em: number): Frame {
   const beside = width >= 44 * em;
-  const left = 3.2 * em;
-  const panel = beside ? Math.max(19 * em, Math.min(27 * em, 0.36 * width)) : 0;
+  const left = 3.9 * em;
+  const panel = beside ? Math.max(20 * em, Math.min(28 * em, 0.385 * width)) : 0;
   const right = width - panel - (beside ? 0 : 2.8 * em);
   const flowTop = 1.8 * em;
   const flowBottom = flowTop + 4 * em;

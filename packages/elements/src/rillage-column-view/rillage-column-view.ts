@@ -14,8 +14,9 @@ import { version } from '../version.js';
 import { drawBands, layerColour, palette, type Tint } from './bitmap.js';
 import { asSection } from './check.js';
 import { cutView, profileScale } from './cut-view.js';
-import { frameOf, nearestColumn, timeOf, type Frame } from './geometry.js';
+import { frameOf, timeOf, type Frame } from './geometry.js';
 import { legend } from './legend.js';
+import { season, SectionLine } from './line.js';
 import { columnViewMessages, type ColumnViewKey } from './messages.js';
 import type { SectionData } from './section-type.js';
 import { sectionView } from './section-view.js';
@@ -70,7 +71,6 @@ export class RillageColumnView extends LitElement {
     messages: { attribute: false },
     size: { state: true },
     drawn: { state: true },
-    announcement: { state: true },
   };
 
   /** ISO instant at which the line stands; the kept moment nearest to it is shown. Default: the last. */
@@ -88,22 +88,38 @@ export class RillageColumnView extends LitElement {
   declare private size: { width: number; em: number };
   /** null before the first attempt, false where there is no canvas. */
   declare private drawn: boolean | null;
-  declare private announcement: string;
 
   #language = new Language(this, columnViewMessages);
   #link = new StationLink(this);
-  #cursor = new CursorLink(this, (at) => at !== null && (this.at = at));
+  #cursor = new CursorLink(this, (at) => {
+    if (at !== null) this.at = at;
+  });
+  #line: SectionLine = new SectionLine(
+    this,
+    () => {
+      const section = asSection(this.section);
+      return section && this.#frame && { section, frame: this.#frame };
+    },
+    {
+      moved: (at) => this.#cursor.say(at),
+      describe: () => {
+        const section = asSection(this.section);
+        return section ? atLine(this.#language, section, section.columns[this.#line.place(section)]!, this.timeZone) : '';
+      },
+    },
+  );
   #table = new DataTable(this, this.#language);
   #paints = new PaintWatch(this, () => {
     this.#bitmap = null;
     this.requestUpdate();
   });
   #observer: ResizeObserver | undefined;
-  #timer: ReturnType<typeof setTimeout> | undefined;
   /** What the bitmap on the canvas was drawn from. */
   #bitmap: unknown[] | null = null;
   #still: { from: unknown[]; picture: TemplateResult; scale: number; colours: Uint32Array } | null = null;
   #frame: Frame | null = null;
+  /** Whether the size of the text is known: it is read once there is text, then whenever the element's box changes. */
+  #measured = false;
 
   constructor() {
     super();
@@ -114,7 +130,6 @@ export class RillageColumnView extends LitElement {
     this.section = null;
     this.size = { width: 640, em: 13 };
     this.drawn = null;
-    this.announcement = '';
   }
 
   override connectedCallback(): void {
@@ -127,7 +142,6 @@ export class RillageColumnView extends LitElement {
     super.disconnectedCallback();
     this.#observer?.disconnect();
     this.#observer = undefined;
-    clearTimeout(this.#timer);
   }
 
   override render(): TemplateResult {
@@ -135,7 +149,7 @@ export class RillageColumnView extends LitElement {
     if (!section) return html`<slot></slot>${probe}`;
     const say = (key: ColumnViewKey): string => this.#language.say(key);
     const language = this.#language;
-    const place = this.#place(section);
+    const place = this.#line.place(section);
     const column = section.columns[place]!;
     const { frame, picture, scale, colours, tint } = this.#stillParts(section);
     const day = dayOf(language, section, column, this.timeZone);
@@ -156,7 +170,7 @@ export class RillageColumnView extends LitElement {
           </button>
         </div>
         <div
-          class="picture"
+          class=${this.drawn === false ? 'picture plain' : 'picture'}
           part="picture"
           role="slider"
           tabindex="0"
@@ -166,9 +180,9 @@ export class RillageColumnView extends LitElement {
           aria-valuenow=${place}
           aria-valuetext=${day}
           aria-describedby="keys"
-          @keydown=${this.#key}
-          @pointerdown=${this.#press}
-          @pointermove=${this.#drag}
+          @keydown=${this.#line.onKey}
+          @pointerdown=${this.#line.onPointer}
+          @pointermove=${this.#line.onPointer}
         >
           <canvas aria-hidden="true"></canvas>
           ${svg`<svg viewBox="0 0 ${frame.width} ${frame.height}" aria-hidden="true" focusable="false">
@@ -184,7 +198,7 @@ export class RillageColumnView extends LitElement {
                 type="button"
                 part="button"
                 ?disabled=${days < 0 ? place === 0 : place === section.columns.length - 1}
-                @click=${() => this.#go(section, this.#away(section, place, days))}
+                @click=${() => this.#line.move(days)}
               >
                 ${say(key)}
               </button>`,
@@ -192,7 +206,7 @@ export class RillageColumnView extends LitElement {
         </div>
         <p class="readout" part="readout">${atLine(language, section, column, this.timeZone)}</p>
         <p class="unseen" id="keys">${say('column.keys')}</p>
-        <div class="unseen" role="status">${this.announcement}</div>
+        <div class="unseen" role="status">${this.#line.announcement}</div>
         <div class=${this.table || this.drawn === false ? 'table' : 'table printed'}>
           ${this.#table.render({ caption: language.say('column.table', { date: day }), columns, rows })}
         </div>
@@ -202,7 +216,7 @@ export class RillageColumnView extends LitElement {
   }
 
   protected override updated(): void {
-    this.#measure();
+    if (!this.#measured) this.#measure();
     const section = asSection(this.section);
     const canvas = this.renderRoot.querySelector('canvas');
     if (!section || !canvas || !this.#frame) return;
@@ -256,79 +270,16 @@ export class RillageColumnView extends LitElement {
     >`;
   }
 
-  #place(section: SectionData): number {
-    const time = this.at === null ? NaN : Date.parse(this.at);
-    return Number.isFinite(time) ? nearestColumn(section, time) : section.columns.length - 1;
-  }
-
-  /** The place some days away; at least one place. */
-  #away(section: SectionData, place: number, days: number): number {
-    const there = nearestColumn(section, timeOf(section, section.columns[place]!) + days * 86_400_000);
-    const least = place + Math.sign(days);
-    return Math.max(0, Math.min(section.columns.length - 1, days < 0 ? Math.min(least, there) : Math.max(least, there)));
-  }
-
-  #go(section: SectionData, place: number): void {
-    if (place === this.#place(section)) return;
-    this.at = new Date(timeOf(section, section.columns[place]!)).toISOString();
-    this.#cursor.say(this.at);
-    clearTimeout(this.#timer);
-    this.#timer = setTimeout(() => {
-      const now = asSection(this.section);
-      this.announcement = now ? atLine(this.#language, now, now.columns[this.#place(now)]!, this.timeZone) : '';
-    }, restMs);
-  }
-
-  #key = (event: KeyboardEvent): void => {
-    const section = asSection(this.section);
-    if (!section || event.ctrlKey || event.metaKey || event.altKey) return;
-    const place = this.#place(section);
-    const places: Record<string, () => number> = {
-      ArrowRight: () => place + 1,
-      ArrowUp: () => place + 1,
-      ArrowLeft: () => place - 1,
-      ArrowDown: () => place - 1,
-      PageUp: () => this.#away(section, place, season),
-      PageDown: () => this.#away(section, place, -season),
-      Home: () => 0,
-      End: () => section.columns.length - 1,
-    };
-    if (!Object.hasOwn(places, event.key)) return;
-    event.preventDefault();
-    event.stopPropagation();
-    this.#go(section, Math.max(0, Math.min(section.columns.length - 1, places[event.key]!())));
-  };
-
-  #press = (event: PointerEvent): void => {
-    if (event.button !== 0) return;
-    (event.currentTarget as Element).setPointerCapture?.(event.pointerId);
-    this.#follow(event);
-  };
-  #drag = (event: PointerEvent): void => {
-    if (event.buttons & 1) this.#follow(event);
-  };
-  #follow(event: PointerEvent): void {
-    const section = asSection(this.section);
-    const box = this.renderRoot.querySelector('.picture > svg')?.getBoundingClientRect();
-    if (!section || !box?.width || !this.#frame) return;
-    const { left, right, from, to, width } = this.#frame;
-    const x = ((event.clientX - box.left) / box.width) * width;
-    // The cut beside the section is no place for the line.
-    if (event.type === 'pointerdown' && (x < left - 24 || x > right + 24)) return;
-    this.#go(section, nearestColumn(section, from + ((x - left) / (right - left)) * (to - from)));
-  }
-
   #measure(): void {
     if (!this.isConnected) return;
     const width = Math.round(this.clientWidth);
     const text = this.renderRoot.querySelector('.readout');
+    this.#measured = text !== null;
     const em = text ? parseFloat(getComputedStyle(text).fontSize) || 13 : 13;
     if (width > 0 && (width !== this.size.width || em !== this.size.em)) this.size = { width, em };
   }
 }
 
-const season = 91;
-const restMs = 250;
 const moves = [
   { key: 'column.seasonEarlier', days: -season },
   { key: 'column.earlier', days: -1e-6 },

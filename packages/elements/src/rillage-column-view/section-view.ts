@@ -94,8 +94,7 @@ function yearLines(speech: Speech, section: SectionData, frame: Frame): Template
         });
       const labelled = points.length > 0 && end > lastLabel + 1.1 * em && end < frame.bottom + 0.3 * em;
       if (labelled) lastLabel = end;
-      return svg`<path class="year under" d=${`M${frame.x(time).toFixed(1)} ${top}L${points.join('L')}`} />
-        <path class="year" d=${`M${frame.x(time).toFixed(1)} ${top}L${points.join('L')}`} />
+      return svg`<path class="year" d=${`M${frame.x(time).toFixed(1)} ${top}L${points.join('L')}`} />
         ${labelled ? svg`<text class="small" x=${right + 0.35 * em} y=${end + 0.35 * em}>${label}</text>` : ''}`;
     });
 }

@@ -70,15 +70,14 @@ export const columnViewStyles = css`
     stroke-width: 0.75;
     stroke-linejoin: round;
   }
+  /* Bands have the same colours by day and night, so their lines have too. */
   .year {
     fill: none;
-    stroke: var(--_ink);
-    stroke-width: 0.75;
+    stroke: rgb(255 255 255 / 0.72);
+    stroke-width: 0.9;
   }
-  .year.under {
-    stroke: var(--_paper);
-    stroke-width: 1.5;
-    opacity: 0.5;
+  .plain .year {
+    stroke: var(--_ink);
   }
   .layer {
     shape-rendering: crispEdges;
@@ -120,6 +119,9 @@ export const columnViewStyles = css`
     .layer,
     .legend rect {
       fill: Canvas;
+    }
+    .year {
+      stroke: CanvasText;
     }
   }
 `;

@@ -1,5 +1,6 @@
 import { age, ageSpan, moment, number, percent } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
+import { lazyRows } from '../shared/lazy-rows.js';
 import { cleanText } from '../shared/text.js';
 import { depthOfShare, knownDepth, timeOf } from './geometry.js';
 import type { ColumnViewKey } from './messages.js';
@@ -58,14 +59,14 @@ export function columnRows(speech: Speech, section: SectionData, column: Section
     speech.say('amount.span', { low: millimetres(speech, from), high: millimetres(speech, to) });
   const share = (name: string, row: number): string =>
     percent(speech, column.selection[name]![row]! - (row ? column.selection[name]![row - 1]! : 0));
-  const rows = bottom.map((depth, row) => [
-    span(row ? bottom[row - 1]! : 0, depth),
+  const layer = (row: number): string[] => [
+    span(row ? bottom[row - 1]! : 0, bottom[row]!),
     oldest[row]! < 2 ? age(speech, oldest[row]!) : ageSpan(speech, youngest[row]!, oldest[row]!),
     ...outflows.map((name) => share(name, row)),
     ...tracers.map((name) => number(speech.tag, { maximumSignificantDigits: 4 }).format(column.concentration[name]![row]!)),
-  ]);
+  ];
   const below = section.storageInformed ? span(knownDepth(column), column.storage) : `> ${millimetres(speech, knownDepth(column))}`;
-  const rest = outflows.map((name) => percent(speech, Math.max(0, 1 - (column.selection[name]!.at(-1) ?? 0))));
+  const rest = (): string[] => outflows.map((name) => percent(speech, Math.max(0, 1 - (column.selection[name]!.at(-1) ?? 0))));
   return {
     columns: [
       speech.say('column.layer'),
@@ -73,6 +74,8 @@ export function columnRows(speech: Speech, section: SectionData, column: Section
       ...outflows.map((name) => speech.say('column.shareOf', { outflow: outflowName(speech, name) })),
       ...tracers.map((name) => tracerName(section, name)),
     ],
-    rows: [...rows, [below, speech.say('column.preRecord'), ...rest, ...tracers.map(() => '–')]],
+    rows: lazyRows(bottom.length + 1, (row) =>
+      row < bottom.length ? layer(row) : [below, speech.say('column.preRecord'), ...rest(), ...tracers.map(() => '–')],
+    ),
   };
 }

@@ -59,6 +59,9 @@ export const explorerStyles = css`
     margin-block: 0.25rem 1.5rem;
     font-size: var(--_size-1);
   }
+  ::slotted(*) {
+    margin-block-end: 3rem;
+  }
   @media print {
     .controls input,
     .state {

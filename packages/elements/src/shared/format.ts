@@ -71,10 +71,17 @@ export function moment(language: string, endOfStep: string, stepDays: number, ti
 export function date(language: string, time: number | string, options: Intl.DateTimeFormatOptions, timeZone = 'UTC'): string {
   const value = new Date(time);
   if (Number.isNaN(value.getTime())) return '';
+  const key = `${language} ${timeZone} ${JSON.stringify(options)}`;
+  let format = dateFormats.get(key);
+  if (!format) dateFormats.set(key, (format = dateFormat(language, options, timeZone)));
+  return format.format(value);
+}
+
+function dateFormat(language: string, options: Intl.DateTimeFormatOptions, timeZone: string): Intl.DateTimeFormat {
   try {
-    return new Intl.DateTimeFormat(language, { ...options, timeZone }).format(value);
+    return new Intl.DateTimeFormat(language, { ...options, timeZone });
   } catch {
-    return new Intl.DateTimeFormat(language, { ...options, timeZone: 'UTC' }).format(value);
+    return new Intl.DateTimeFormat(language, { ...options, timeZone: 'UTC' });
   }
 }
 
@@ -91,6 +98,7 @@ export const msPerDay = 86_400_000;
 // So that eight months computed as 8.0000001 stay eight.
 const tiny = 1e-6;
 const formats = new Map<string, Intl.NumberFormat>();
+const dateFormats = new Map<string, Intl.DateTimeFormat>();
 // A year of 365.25 days and its twelfth, as the reading's own sentence counts them.
 export const lengths = { day: 1, month: 30.4375, year: 365.25 };
 
