@@ -2,6 +2,7 @@ import type { SelectionEvaluator } from '../selection/index.js';
 import type { ColumnState } from './columnState.js';
 import { StepIntegrator } from './integrator.js';
 import { FastPass } from './fastPass.js';
+import { SmoothPass } from './smoothPass.js';
 
 /** Error allowed in the share of the step's outflow taken above any one boundary. */
 export const EXACT_TOLERANCE = 1e-9;
@@ -20,6 +21,7 @@ export class ColumnStep {
   readonly preTaken: Float64Array;
   private readonly integrator: StepIntegrator;
   private readonly fast: FastPass | null;
+  private readonly smooth: SmoothPass | null;
   private readonly tolerance: number;
   private readonly largestPart: number;
   private readonly above: Float64Array;
@@ -36,6 +38,7 @@ export class ColumnStep {
     const count = evaluator.names.length;
     this.integrator = new StepIntegrator(evaluator);
     this.fast = everyAge ? null : FastPass.for(evaluator);
+    this.smooth = everyAge || this.fast !== null ? null : SmoothPass.for(evaluator);
     this.tolerance = everyAge ? EXACT_TOLERANCE : this.fast !== null ? DEFAULT_TOLERANCE : UNEVEN_TOLERANCE;
     this.largestPart = evaluator.pieces.some((active) => active.curve?.cornered) ? CORNERED_PART : 1;
     this.preTaken = new Float64Array(count);
@@ -46,7 +49,7 @@ export class ColumnStep {
 
   /** Share of an outflow that a merged parcel may give: within it, ages and concentrations are no longer told apart. */
   get largestMerged(): number {
-    return this.largestPart < 1 ? 0.0015 : this.fast !== null ? 0.006 : 0.003;
+    return this.largestPart < 1 ? 0.0015 : this.fast !== null ? 0.006 : 0.0045;
   }
 
   /** The inflow of the step before: part of the state, since the choice of method looks at it. */
@@ -66,6 +69,7 @@ export class ColumnStep {
   advance(state: ColumnState, enters: boolean, inflow: number, flux: Float64Array, days: number): void {
     const { above } = this;
     const fast = this.careful ? null : this.fast;
+    const smooth = this.careful ? null : this.smooth;
     const outflows = state.outflows;
     const totalBefore = state.total;
     let out = 0;
@@ -74,9 +78,11 @@ export class ColumnStep {
     above.fill(0);
     if (out <= 0) this.fill(state, enters ? inflow * days : 0);
     else {
+      const rate = Math.max(inflow, out);
+      const lastRate = Math.max(this.lastInflow, out);
       if (fast !== null) {
         const stretch = Math.abs(totalAfter - totalBefore) / Math.min(totalBefore, totalAfter);
-        fast.setStep(Math.max(inflow, out), Math.max(this.lastInflow, out), flux, days, stretch);
+        fast.setStep(rate, lastRate, flux, days, stretch);
       }
       const tolerance = this.careful ? Math.min(this.tolerance, UNEVEN_TOLERANCE) : this.tolerance;
       this.integrator.setStep(days, inflow, flux, totalBefore, tolerance, this.largestPart);
@@ -98,6 +104,9 @@ export class ColumnStep {
         if (fast !== null && (start >= fast.fourFrom || (inflow > out && fast.fourFrom < Infinity))) {
           fast.four(start, inflow, flux, days, totalBefore, inflow - out);
           this.settle(state, i, 0, flux, days, fast.taken, fast.pair);
+        } else if (smooth !== null && smooth.serves(start, Math.min(totalBefore, totalAfter), rate, lastRate, out, days)) {
+          smooth.move(start, i, state.lastShare, inflow, flux, days, 0.5 * (totalBefore + totalAfter));
+          this.settle(state, i, 0, flux, days, smooth.taken, smooth.share);
         } else {
           this.integrator.carry(start);
           this.settle(state, i, 0, flux, days, this.integrator.taken, this.integrator.share);
@@ -132,14 +141,15 @@ export class ColumnStep {
 
   /** Without outflow every parcel keeps its depth and a new one takes what falls; Ω is looked up for the predictor of the next step. */
   private fill(state: ColumnState, fallen: number): void {
+    const looks = this.fast !== null || this.smooth !== null;
     if (fallen > 0) state.depth[state.count - 1] = fallen;
     let edge = 0;
     for (let i = state.count - 1; i >= 0; i--) {
       edge += state.depth[i];
-      if (this.fast !== null) this.evaluator.evaluate(edge, state.total + fallen, this.loss);
+      if (looks) this.evaluator.evaluate(edge, state.total + fallen, this.loss);
       for (let f = 0; f < state.outflows; f++) {
         state.cumulative[f][i] = 0;
-        if (this.fast !== null) state.lastShare[f][i] = Math.min(1, this.loss[f]);
+        if (looks) state.lastShare[f][i] = Math.min(1, this.loss[f]);
       }
     }
   }

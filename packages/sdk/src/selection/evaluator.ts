@@ -99,6 +99,15 @@ export class SelectionEvaluator {
     }
   }
 
+  /** Every pair of shape parameters that a piece may come near: the constants, or the values a driven one is given. */
+  shapesOf(active: ActivePiece): [number, number][] {
+    const of = (slot: number): number[] => {
+      if (slot < 0) return [NaN];
+      return this.amounts.driven.find((entry) => entry.slot === slot)?.amount.value ?? [this.amounts.values[slot]];
+    };
+    return of(active.piece.p).flatMap((p) => of(active.piece.q).map((q): [number, number] => [p, q]));
+  }
+
   private activate(piece: Piece, outflow: number): ActivePiece {
     const constant = (slot: number): boolean => this.amounts.isConstant(slot);
     const values = this.amounts.values;
