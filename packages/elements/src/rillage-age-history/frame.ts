@@ -1,5 +1,6 @@
 import type { StationHistory } from '@rillage/sdk';
 import { msPerDay } from '../shared/format.js';
+import { lineHeight } from '../shared/text-lines.js';
 
 /** Where the two panels stand, CSS px, and how steps lie along them. Time runs left to right in every language. */
 export interface Frame {
@@ -19,12 +20,13 @@ export interface Frame {
   stepAt: (x: number) => number;
 }
 
-export function frameOf(width: number, em: number, from: number, to: number): Frame {
+/** @param titles  lines above each panel */
+export function frameOf(width: number, em: number, from: number, to: number, titles: { upper: string[]; lower: string[] }): Frame {
   const left = 3.4 * em;
   const right = width - 1;
-  const upperTop = 1.8 * em;
+  const upperTop = (0.6 + lineHeight * titles.upper.length) * em;
   const upper = { top: upperTop, bottom: upperTop + Math.round(Math.max(13 * em, Math.min(20 * em, 0.3 * width))) };
-  const lowerTop = upper.bottom + 2.4 * em;
+  const lowerTop = upper.bottom + (1.2 + lineHeight * titles.lower.length) * em;
   const lower = { top: lowerTop, bottom: lowerTop + 10 * em };
   const each = (right - left) / (to - from);
   return {
@@ -52,7 +54,7 @@ export interface Span {
 export function changed(span: Span, steps: number, factor: number, by = 0): Span {
   const least = Math.min(steps, 14);
   const width = Math.max(least, Math.min(steps, Math.round((span.to - span.from) * factor)));
-  const middle = (span.from + span.to) / 2 + by * (span.to - span.from);
-  const from = Math.max(0, Math.min(steps - width, Math.round(middle - width / 2)));
+  const shift = Math.trunc(by * (span.to - span.from));
+  const from = Math.max(0, Math.min(steps - width, Math.round((span.from + span.to - width) / 2) + shift));
   return { from, to: from + width };
 }

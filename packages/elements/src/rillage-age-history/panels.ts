@@ -2,6 +2,7 @@ import { svg, type TemplateResult } from 'lit';
 import type { Sample, StationHistory } from '@rillage/sdk';
 import { number } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
+import { linesAt } from '../shared/text-lines.js';
 import { timeMarks } from '../shared/time-axis.js';
 import { endOf, stepAtTime, type Frame } from './frame.js';
 import { hatchBetween } from './hatch-between.js';
@@ -114,7 +115,7 @@ export function axesOf(
   frame: Frame,
   speech: Speech,
   mostFlow: number,
-  titles: { upper: string; lower: string },
+  titles: { upper: string[]; lower: string[] },
   asShares: boolean,
 ): TemplateResult {
   const { em, left, right, upper, lower } = frame;
@@ -122,8 +123,8 @@ export function axesOf(
   const format = number(speech.tag, { maximumSignificantDigits: 3 });
   const y = (value: number): number => upper.bottom - (value / mostFlow) * (upper.bottom - upper.top);
   return svg`
-    <text x=${left} y=${upper.top - 0.6 * em}>${titles.upper}</text>
-    <text x=${left} y=${lower.top - 0.6 * em}>${titles.lower}</text>
+    ${linesAt(titles.upper, titles.upper.length > 1 ? 0 : left, upper.top - 0.6 * em, em, true)}
+    ${linesAt(titles.lower, titles.lower.length > 1 ? 0 : left, lower.top - 0.6 * em, em, true)}
     ${ticks(0, mostFlow).map(
       (value) => svg`<line class="tick" x1=${left - 0.4 * em} x2=${left} y1=${y(value)} y2=${y(value)} />
         <text class="end" x=${left - 0.6 * em} y=${y(value) + 0.35 * em}>${format.format(value)}</text>`,

@@ -10,17 +10,19 @@ import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
 import { StationLink } from '../shared/station-link.js';
+import { textLines } from '../shared/text-lines.js';
 import { cleanText } from '../shared/text.js';
 import { theme } from '../shared/theme.js';
 import { version } from '../version.js';
 import { companions, legend, zoomButtons } from './controls.js';
 import { asHistory, asSamples } from './check.js';
+import { SpanDrag } from './drag.js';
 import { changed, endOf, frameOf, stepAtTime, type Frame, type Span } from './frame.js';
 import { ageHistoryMessages, type AgeHistoryKey } from './messages.js';
 import { axesOf, medianPanel, stackPanel, tracerPanel } from './panels.js';
 import { bandsOf, piecesOf, stepsAPiece, stopsOf } from './stack.js';
 import { ageHistoryStyles } from './styles.js';
-import { historyRows, readAt, summary } from './words.js';
+import { aboutBelow, historyRows, readAt, summary } from './words.js';
 
 /**
  * The flow of the stream through time, split by the age of its water and stacked oldest at the base; beneath it the same as shares, the median
@@ -68,7 +70,6 @@ export class RillageAgeHistory extends LitElement {
     messages: { attribute: false },
     size: { state: true },
     span: { state: true },
-    drag: { state: true },
     linked: { state: true },
   };
 
@@ -87,7 +88,6 @@ export class RillageAgeHistory extends LitElement {
   declare private size: { width: number; em: number };
   /** Steps shown; null: all of them. */
   declare private span: Span | null;
-  declare private drag: { from: number; to: number } | null;
   /** Moment another element of the station points at. */
   declare private linked: string | null;
 
@@ -107,6 +107,14 @@ export class RillageAgeHistory extends LitElement {
     points: () => this.#stops.length,
     describe: (series, point) => (this.#drawn ? readAt(this.#language, this.#drawn, series, this.#stops[point]!, this.timeZone) : ''),
   }));
+  #drag = new SpanDrag(
+    this,
+    () => this.#frame,
+    (span) => {
+      const steps = this.#drawn?.flow.length;
+      if (steps) this.#show(changed(span, steps, 1), steps);
+    },
+  );
   #observer: ResizeObserver | undefined;
 
   constructor() {
@@ -118,7 +126,6 @@ export class RillageAgeHistory extends LitElement {
     this.samples = null;
     this.size = { width: 640, em: 13 };
     this.span = null;
-    this.drag = null;
     this.linked = null;
   }
 
@@ -132,7 +139,6 @@ export class RillageAgeHistory extends LitElement {
     super.disconnectedCallback();
     this.#observer?.disconnect();
     this.#observer = undefined;
-    removeEventListener('pointerup', this.#release);
   }
 
   override render(): TemplateResult {
@@ -163,7 +169,7 @@ export class RillageAgeHistory extends LitElement {
         )}`,
         picture: html`${svg`<svg viewBox="0 0 ${frame.width} ${frame.height}" aria-hidden="true" focusable="false">
           ${picture}
-          ${this.drag ? svg`<rect class="chosen" x=${Math.min(this.drag.from, this.drag.to)} width=${Math.abs(this.drag.to - this.drag.from)} y=${frame.upper.top} height=${frame.lower.bottom - frame.upper.top} />` : nothing}
+          ${this.#drag.at ? svg`<rect class="chosen" x=${Math.min(this.#drag.at.from, this.#drag.at.to)} width=${Math.abs(this.#drag.at.to - this.#drag.at.from)} y=${frame.upper.top} height=${frame.lower.bottom - frame.upper.top} />` : nothing}
           ${
             step === null
               ? nothing
@@ -173,7 +179,10 @@ export class RillageAgeHistory extends LitElement {
                 )
           }
         </svg>`}${legend(language, history)}`,
-        readout: step === null ? this.#about(history) : readAt(language, history, point === null ? 0 : series, step, this.timeZone),
+        readout:
+          step === null
+            ? aboutBelow(language, history, this.#belowOf(history), asSamples(this.samples))
+            : readAt(language, history, point === null ? 0 : series, step, this.timeZone),
         cursor: this.#cursor,
         onPointerMove: this.#pointer,
         table: this.#table.render({ caption: say('history.name'), ...table }),
@@ -199,20 +208,16 @@ export class RillageAgeHistory extends LitElement {
   #stillParts(history: StationHistory, span: Span): Still & { frame: Frame } {
     const from = [history, this.samples, this.below, this.size, span.from, span.to, this.#language.tag, this.messages, this.timeZone];
     if (!this.#still?.from.every((value, index) => value === from[index]) || !this.#frame) {
-      const frame = frameOf(this.size.width, this.size.em, span.from, span.to);
+      const language = this.#language;
+      const { width, em } = this.size;
+      const below = this.#belowOf(history);
+      const each = stepsAPiece(span.from, span.to, width - 4 * em);
+      const titles = this.#titles(history, below, each);
+      const frame = frameOf(width, em, span.from, span.to, titles);
       this.#frame = frame;
       this.#stops = stopsOf(span.from, span.to);
-      const each = stepsAPiece(span.from, span.to, frame.right - frame.left);
       const pieces = piecesOf(history, span.from, span.to, each);
       const most = pieces.reduce((high, { flow }) => Math.max(high, flow), 0) || 1;
-      const below = this.#belowOf(history);
-      const language = this.#language;
-      const upper =
-        each === 1
-          ? language.say('history.flow')
-          : language.say('history.flowMeans', { days: dayCount(language, Math.round(each * history.stepDays * 10) / 10) });
-      const lower =
-        below === 'shares' ? language.say('history.shares') : below === 'median' ? language.say('history.median') : cleanText(below, 40);
       this.#still = {
         from,
         picture: svg`
@@ -224,12 +229,22 @@ export class RillageAgeHistory extends LitElement {
                 ? medianPanel(history, frame, this.#marks())
                 : tracerPanel(history, frame, below, asSamples(this.samples), language)
           }
-          ${axesOf(history, frame, language, most, { upper, lower }, below === 'shares')}`,
+          ${axesOf(history, frame, language, most, titles, below === 'shares')}`,
         table: historyRows(language, history, this.#stops, this.timeZone),
         summary: summary(language, history, span, this.timeZone),
       };
     }
     return { ...this.#still, frame: this.#frame };
+  }
+
+  #titles(history: StationHistory, below: string, each: number): { upper: string[]; lower: string[] } {
+    const language = this.#language;
+    const days = dayCount(language, Math.round(each * history.stepDays * 10) / 10);
+    const upper = each === 1 ? language.say('history.flow') : language.say('history.flowMeans', { days });
+    const lower =
+      below === 'shares' ? language.say('history.shares') : below === 'median' ? language.say('history.median') : cleanText(below, 40);
+    const { width, em } = this.size;
+    return { upper: textLines(upper, width - 4 * em, em), lower: textLines(lower, width - 4 * em, em) };
   }
 
   #marks(): { days: number; label: string }[] {
@@ -251,13 +266,6 @@ export class RillageAgeHistory extends LitElement {
     return step >= from && step < to ? step : null;
   }
 
-  #about(history: StationHistory): string {
-    const below = this.#belowOf(history);
-    if (below === 'shares') return this.#language.say('history.aboutShares');
-    if (below === 'median') return this.#language.say(history.medianLow ? 'history.aboutMedian' : 'history.aboutMedianBare');
-    return this.#language.say(asSamples(this.samples).some(({ tracer }) => tracer === below) ? 'history.aboutTracer' : 'history.noSamples');
-  }
-
   #show(span: Span, steps: number): void {
     this.span = span.from === 0 && span.to === steps ? null : span;
     this.#cursor.show(null);
@@ -269,27 +277,10 @@ export class RillageAgeHistory extends LitElement {
     const frame = this.#frame;
     if (!box?.width || !frame || !this.#drawn) return;
     const x = Math.max(frame.left, Math.min(frame.right, ((event.clientX - box.left) / box.width) * frame.width));
-    if (event.type === 'pointerdown' && event.button === 0) {
-      this.drag = { from: x, to: x };
-      addEventListener('pointerup', this.#release);
-      addEventListener('pointercancel', this.#release);
-    } else if (this.drag && event.buttons & 1) {
-      this.drag = { ...this.drag, to: x };
-    }
+    this.#drag.follow(event, x);
     const step = frame.stepAt(x);
     const stride = (this.#stops[1] ?? 1) - (this.#stops[0] ?? 0);
     this.#cursor.show(Math.max(0, Math.min(this.#stops.length - 1, Math.round((step - frame.from) / (stride || 1)))), 0);
-  };
-
-  #release = (event: Event): void => {
-    removeEventListener('pointerup', this.#release);
-    removeEventListener('pointercancel', this.#release);
-    const { drag } = this;
-    this.drag = null;
-    const frame = this.#frame;
-    if (!drag || !frame || !this.#drawn || event.type === 'pointercancel' || Math.abs(drag.to - drag.from) < leastDrag) return;
-    const [from, to] = [frame.stepAt(Math.min(drag.from, drag.to)), frame.stepAt(Math.max(drag.from, drag.to)) + 1];
-    this.#show(changed({ from, to }, this.#drawn.flow.length, 1), this.#drawn.flow.length);
   };
 
   #measure(): void {
@@ -309,9 +300,6 @@ interface Still {
   table: { columns: string[]; rows: string[][] };
   summary: string;
 }
-
-// px; less is a click
-const leastDrag = 8;
 
 declare global {
   interface HTMLElementTagNameMap {

@@ -32,6 +32,10 @@ export const ageHistoryStyles = css`
   [dir='rtl'] text.middle {
     text-anchor: middle;
   }
+  /* A table of many columns scrolls by itself on a narrow page; the page does not. */
+  .table {
+    overflow-x: auto;
+  }
   .hair {
     stroke: var(--_hairline);
     stroke-width: 0.75;

@@ -1,4 +1,4 @@
-import type { StationHistory } from '@rillage/sdk';
+import type { Sample, StationHistory } from '@rillage/sdk';
 import { age, ageSpan, moment, number, olderThan, percent } from '../shared/format.js';
 import { lazyRows } from '../shared/lazy-rows.js';
 import { cleanText } from '../shared/text.js';
@@ -18,6 +18,13 @@ export const dayOf = (speech: Speech, history: StationHistory, step: number, zon
 
 const flowText = (speech: Speech, flow: number | null | undefined): string =>
   number(speech.tag, { maximumSignificantDigits: 2 }).format(flow ?? 0);
+
+/** What the lower panel shows and does not show. */
+export function aboutBelow(speech: Speech, history: StationHistory, below: string, samples: Sample[]): string {
+  if (below === 'shares') return speech.say('history.aboutShares');
+  if (below === 'median') return speech.say(history.medianLow ? 'history.aboutMedian' : 'history.aboutMedianBare');
+  return speech.say(samples.some(({ tracer }) => tracer === below) ? 'history.aboutTracer' : 'history.noSamples');
+}
 
 /** What is read at a step: everything (series 0), one class (1 to K), or the median (K + 1). */
 export function readAt(speech: Speech, history: StationHistory, series: number, step: number, zone: string): string {

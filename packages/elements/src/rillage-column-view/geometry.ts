@@ -1,4 +1,5 @@
 import { msPerDay } from '../shared/format.js';
+import { lineHeight } from '../shared/text-lines.js';
 import type { SectionData, SectionDataColumn } from './section-type.js';
 
 /** Where everything of the picture stands, CSS px. Time runs left to right and depth downwards in every language. */
@@ -26,24 +27,26 @@ export interface Frame {
   down: (mm: number) => number;
 }
 
-export function frameOf(section: SectionData, width: number, em: number): Frame {
+/** @param titles  lines above the flow record and below the depth axis */
+export function frameOf(section: SectionData, width: number, em: number, titles: { flow: string[]; depth: string[] }): Frame {
   const beside = width >= 44 * em;
   const left = 3.9 * em;
   const panel = beside ? Math.max(20 * em, Math.min(28 * em, 0.385 * width)) : 0;
   const right = width - panel - (beside ? 0 : 2.8 * em);
-  const flowTop = 1.8 * em;
+  const flowTop = (0.6 + lineHeight * titles.flow.length) * em;
+  const more = lineHeight * (titles.depth.length - 1) * em;
   const flowBottom = flowTop + 4 * em;
   const top = flowBottom + 0.9 * em;
   const bottom = top + Math.round(Math.max(20 * em, Math.min(30 * em, 0.42 * width)));
   const cut = beside
     ? { left: right + 3.4 * em, right: width - 1, top, beside }
-    : { left, right: width - 1, top: bottom + 6.4 * em, beside };
+    : { left, right: width - 1, top: bottom + 6.4 * em + more, beside };
   const from = Date.parse(section.start);
   const to = from + section.steps * section.stepDays * msPerDay;
   const depthShown = shownDepth(section);
   return {
     ...{ width, em, left, right, flowTop, flowBottom, top, bottom, cut, depthShown, from, to },
-    height: cut.top + (bottom - top) + 2.6 * em,
+    height: cut.top + (bottom - top) + 2.7 * em + (beside ? 0.3 * em + more : 0),
     x: (time) => left + ((time - from) / (to - from)) * (right - left),
     down: (mm) => (Math.min(mm, depthShown) / depthShown) * (bottom - top),
   };

@@ -74,7 +74,7 @@ export class SectionLine implements ReactiveController {
     if (event.type === 'pointerdown') {
       // The cut beside the section is no place for the line.
       this.#dragging = x > left - reach && x < right + reach;
-      if (this.#dragging) picture.setPointerCapture?.(event.pointerId);
+      if (this.#dragging) capture(picture, event.pointerId);
     }
     if (this.#dragging) this.#go(seen.section, nearestColumn(seen.section, from + ((x - left) / (right - left)) * (to - from)));
   };
@@ -97,6 +97,15 @@ export class SectionLine implements ReactiveController {
       this.announcement = this.say.describe();
       this.host.requestUpdate();
     }, restMs);
+  }
+}
+
+/** So that a drag may leave the picture; a pointer that has just been lifted cannot be captured. */
+function capture(picture: HTMLElement, pointer: number): void {
+  try {
+    picture.setPointerCapture(pointer);
+  } catch {
+    // The press alone has placed the line.
   }
 }
 

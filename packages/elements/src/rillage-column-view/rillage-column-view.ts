@@ -19,7 +19,7 @@ import { legend } from './legend.js';
 import { season, SectionLine } from './line.js';
 import { columnViewMessages, type ColumnViewKey } from './messages.js';
 import type { SectionData } from './section-type.js';
-import { sectionView } from './section-view.js';
+import { sectionView, titlesOf } from './section-view.js';
 import { columnViewStyles } from './styles.js';
 import { tintOf } from './tint.js';
 import { atLine, columnRows, dayOf, tracerName, tracersOf } from './words.js';
@@ -241,10 +241,11 @@ export class RillageColumnView extends LitElement {
     const from = [section, this.size, this.tint, this.#language.tag, this.messages];
     if (!this.#still?.from.every((value, index) => value === from[index]) || !this.#frame) {
       const { width, em } = this.size;
-      this.#frame = frameOf(section, width, em);
+      const titles = titlesOf(this.#language, section, width, em);
+      this.#frame = frameOf(section, width, em, titles);
       this.#still = {
         from,
-        picture: sectionView(this.#language, section, this.#frame),
+        picture: sectionView(this.#language, section, this.#frame, titles),
         scale: profileScale(section, this.#frame.depthShown),
         colours: palette(this.#paints.read(), tint),
       };

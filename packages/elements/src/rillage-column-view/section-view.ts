@@ -1,15 +1,16 @@
 import { svg, type TemplateResult } from 'lit';
 import { msPerDay, number } from '../shared/format.js';
+import { linesAt, textLines } from '../shared/text-lines.js';
 import { timeMarks } from '../shared/time-axis.js';
 import { depthYounger, knownDepth, timeOf, type Frame } from './geometry.js';
 import type { SectionData } from './section-type.js';
 import { millimetres, outflowName, outflowsOf, type Speech } from './words.js';
 
 /** Everything of the picture that the line does not move: axes, the flow record, the fine lines of years, the outline of what is known. */
-export function sectionView(speech: Speech, section: SectionData, frame: Frame): TemplateResult {
+export function sectionView(speech: Speech, section: SectionData, frame: Frame, titles: Titles): TemplateResult {
   const { em, left, right, top, bottom } = frame;
   return svg`
-    ${flowRecord(speech, section, frame)}
+    ${flowRecord(speech, section, frame, titles.flow)}
     <path class="ink" d=${boundary(section, frame)} />
     ${yearLines(speech, section, frame)}
     <rect class="edge" x=${left} y=${top} width=${right - left} height=${bottom - top} />
@@ -18,9 +19,24 @@ export function sectionView(speech: Speech, section: SectionData, frame: Frame):
       ({ time, label }) => svg`<line class="tick" x1=${frame.x(time)} x2=${frame.x(time)} y1=${bottom} y2=${bottom + 0.4 * em} />
         <text class=${frame.x(time) > right - 2 * em ? 'end' : frame.x(time) < left + 2 * em ? '' : 'middle'} x=${frame.x(time)} y=${bottom + 1.6 * em}>${label}</text>`,
     )}
-    <text x="0" y=${bottom + 2.9 * em}>${speech.say('column.depth')}</text>
+    ${linesAt(titles.depth, 0, bottom + 2.9 * em, em)}
   `;
 }
+
+/** Lines of text above the flow record and below the depth axis. */
+export interface Titles {
+  flow: string[];
+  depth: string[];
+}
+
+export function titlesOf(speech: Speech, section: SectionData, width: number, em: number): Titles {
+  const name = shownOutflow(section);
+  const flow = name === undefined ? '' : speech.say('column.flow', { outflow: outflowName(speech, name) });
+  return { flow: textLines(flow, width - 4 * em, em), depth: textLines(speech.say('column.depth'), width, em) };
+}
+
+const shownOutflow = (section: SectionData): string | undefined =>
+  outflowsOf(section).find((outflow) => Object.hasOwn(section.flow.outflows, outflow));
 
 /** Ticks of depth at an edge. */
 export function depthAxis(speech: Speech, frame: Frame, x: number, top: number): TemplateResult[] {
@@ -43,8 +59,8 @@ export function roundUp(value: number): number {
   return ([1, 2, 5].find((digit) => digit * power >= value * 0.999) ?? 10) * power;
 }
 
-function flowRecord(speech: Speech, section: SectionData, frame: Frame): TemplateResult | undefined {
-  const name = outflowsOf(section).find((outflow) => Object.hasOwn(section.flow.outflows, outflow));
+function flowRecord(speech: Speech, section: SectionData, frame: Frame, title: string[]): TemplateResult | undefined {
+  const name = shownOutflow(section);
   const values = name === undefined ? [] : section.flow.outflows[name]!;
   if (name === undefined || values.length === 0) return undefined;
   const { em, left, right, flowTop, flowBottom } = frame;
@@ -64,7 +80,7 @@ function flowRecord(speech: Speech, section: SectionData, frame: Frame): Templat
   peaks.forEach((value, place) => (value || !sparse ? points.push(`${(left + place + 0.5).toFixed(1)} ${y(value)}`) : 0));
   return svg`<path class="flow" d=${`M${left} ${flowBottom}L${points.join('L')}L${right} ${flowBottom}`} />
     <line class="tick" x1=${left} x2=${right} y1=${flowBottom} y2=${flowBottom} />
-    <text x=${left} y=${flowTop - 0.6 * em}>${speech.say('column.flow', { outflow: outflowName(speech, name) })}</text>
+    ${linesAt(title, title.length > 1 ? 0 : left, flowTop - 0.6 * em, em, true)}
     <line class="tick" x1=${left - 0.4 * em} x2=${left} y1=${flowTop} y2=${flowTop} />
     <text class="end" x=${left - 0.6 * em} y=${flowTop + 0.35 * em}>${number(speech.tag, { maximumSignificantDigits: 2 }).format(greatest)}</text>`;
 }

@@ -27,19 +27,22 @@ export const explorerStyles = css`
     min-inline-size: 0;
   }
   legend {
+    max-inline-size: 100%;
+    overflow-wrap: anywhere;
     padding: 0;
     padding-inline-end: 0.5em;
   }
   .row {
-    display: grid;
-    grid-template-columns: 1fr auto;
+    display: flex;
+    flex-wrap: wrap;
     align-items: baseline;
+    justify-content: space-between;
     gap: 0 1em;
     font-size: var(--_size-1);
     margin-block-start: 0.4rem;
   }
   input {
-    grid-column: 1 / -1;
+    flex: 1 0 100%;
     inline-size: 100%;
     min-block-size: 24px;
     margin: 0;
