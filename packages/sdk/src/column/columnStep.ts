@@ -89,7 +89,7 @@ export class ColumnStep {
       let edge = 0;
       let i = state.count - 1;
       if (enters) {
-        if (fast !== null && inflow > out && fast.fourFrom < Infinity) {
+        if (fast !== null && fast.allowsFour(0, inflow, flux, days, totalBefore)) {
           fast.four(0, inflow, flux, days, totalBefore, inflow - out);
           this.settle(state, i--, inflow * days, flux, days, fast.taken, fast.pair);
         } else {
@@ -101,7 +101,7 @@ export class ColumnStep {
         const start = edge + state.depth[i];
         if (fast !== null && start >= fast.oneFrom) break;
         edge = start;
-        if (fast !== null && (start >= fast.fourFrom || (inflow > out && fast.fourFrom < Infinity))) {
+        if (fast !== null && fast.allowsFour(start, inflow, flux, days, totalBefore)) {
           fast.four(start, inflow, flux, days, totalBefore, inflow - out);
           this.settle(state, i, 0, flux, days, fast.taken, fast.pair);
         } else if (smooth !== null && smooth.serves(start, Math.min(totalBefore, totalAfter), rate, lastRate, out, days)) {

@@ -10,6 +10,10 @@ const ONE_TOLERANCE = 5e-4;
 const FOUR_TOLERANCE = 3e-4;
 /** Parts into which a step is cut for boundaries near the surface. */
 const SHALLOW_PARTS = 4;
+/** Boundaries that start above this share of the step's inflow begin near the singular start. */
+const NEAR_SURFACE = 0.3;
+/** Share of a boundary's water that may leave in a step for a fixed number of parts. */
+const DRAINED = 0.3;
 /** How far the Ω seen at mid-step is extrapolated to the step's end, where the next step begins; below 1, so that errors die out. */
 const AHEAD = 0.8;
 
@@ -118,15 +122,15 @@ export class FastPass {
   }
 
   /**
-   * Moves one boundary from `start` mm by the classical fourth-order step; `taken` and `share` hold the result. Near the surface the
-   * step is cut into parts of a time s with t = s^4, which takes the singular start Ω ~ S^a, S ~ t out of it.
+   * Moves one boundary from `start` mm by the classical fourth-order step; `taken` and `share` hold the result. A shallow one's step
+   * is cut into parts, near the surface in a time s with t = s^4, which takes the singular start Ω ~ S^a, S ~ t out of it.
    */
   four(start: number, inflow: number, flux: Float64Array, days: number, totalBefore: number, totalRate: number): void {
     const { taken, pair } = this;
     const flux0 = flux[0];
     const flux1 = this.count > 1 ? flux[1] : 0;
-    const shallow = start < this.fourFrom;
-    const parts = shallow ? SHALLOW_PARTS : 1;
+    const parts = start < this.fourFrom ? SHALLOW_PARTS : 1;
+    const rooted = inflow > 0 && start < NEAR_SURFACE * inflow * days;
     const wide = 1 / parts;
     let x0 = 0;
     let x1 = 0;
@@ -134,12 +138,12 @@ export class FastPass {
       const s0 = part * wide;
       const s1 = s0 + 0.5 * wide;
       const s2 = part === parts - 1 ? 1 : s0 + wide;
-      const t0 = shallow ? s0 * s0 * s0 * s0 * days : 0;
-      const t1 = shallow ? s1 * s1 * s1 * s1 * days : 0.5 * days;
-      const t2 = shallow ? s2 * s2 * s2 * s2 * days : days;
-      const v0 = shallow ? 4 * s0 * s0 * s0 * days * wide : days;
-      const v1 = shallow ? 4 * s1 * s1 * s1 * days * wide : days;
-      const v2 = shallow ? 4 * s2 * s2 * s2 * days * wide : days;
+      const t0 = (rooted ? s0 * s0 * s0 * s0 : s0) * days;
+      const t1 = (rooted ? s1 * s1 * s1 * s1 : s1) * days;
+      const t2 = (rooted ? s2 * s2 * s2 * s2 : s2) * days;
+      const v0 = (rooted ? 4 * s0 * s0 * s0 : 1) * days * wide;
+      const v1 = (rooted ? 4 * s1 * s1 * s1 : 1) * days * wide;
+      const v2 = (rooted ? 4 * s2 * s2 * s2 : 1) * days * wide;
       const middle = 1 / (totalBefore + totalRate * t1);
       const end = 1 / (totalBefore + totalRate * t2);
       const from = start - x0 - x1;
@@ -158,6 +162,16 @@ export class FastPass {
     }
     taken[0] = x0;
     if (this.count > 1) taken[1] = x1;
+  }
+
+  /** Whether `four` may move a boundary that starts at `start` mm: deep enough, or cut in parts and not about to be used up. */
+  allowsFour(start: number, inflow: number, flux: Float64Array, days: number, total: number): boolean {
+    if (start >= this.fourFrom) return true;
+    if (this.fourFrom === Infinity) return false;
+    const reached = start + inflow * days;
+    this.look(reached, 1 / total);
+    const drain = flux[0] * this.pair[0] + (this.count > 1 ? flux[1] * this.pair[1] : 0);
+    return drain * days < DRAINED * reached;
   }
 
   /** Ω of both outflows at one depth, into `pair`. */

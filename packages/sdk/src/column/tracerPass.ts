@@ -49,17 +49,39 @@ export function moveTracer(
     react(state, plan, ledger, concentration, entered, days, out);
     return;
   }
-  for (let f = 0; f < outflows; f++) {
-    let sum = 0;
-    let above = 0;
-    for (let i = count - 1; i >= 0; i--) {
-      const reached = cumulative[f][i];
-      sum += (reached - above) * concentration[i];
-      above = reached;
-    }
-    out[f] += sum;
-    ledger.left += sum;
+  for (let f = 0; f < outflows; f += 2) carryMass(cumulative, f, Math.min(f + 1, outflows - 1), concentration, count, ledger, out);
+}
+
+/** Adds Σ taken × concentration of outflows f and g (g may be f) to `out`; two at a time, as the loop waits for its own sums. */
+function carryMass(
+  cumulative: readonly Float64Array[],
+  f: number,
+  g: number,
+  concentration: Float64Array,
+  count: number,
+  ledger: TracerLedger,
+  out: Float64Array,
+): void {
+  const first = cumulative[f];
+  const second = cumulative[g];
+  let above0 = 0;
+  let above1 = 0;
+  let sum0 = 0;
+  let sum1 = 0;
+  for (let i = count - 1; i >= 0; i--) {
+    const c = concentration[i];
+    const reached0 = first[i];
+    const reached1 = second[i];
+    sum0 += (reached0 - above0) * c;
+    sum1 += (reached1 - above1) * c;
+    above0 = reached0;
+    above1 = reached1;
   }
+  out[f] += sum0;
+  ledger.left += sum0;
+  if (g === f) return;
+  out[g] += sum1;
+  ledger.left += sum1;
 }
 
 function react(
