@@ -223,10 +223,15 @@ describe('rillage-age-history: cursor, zoom and table', () => {
       '3 months to 12 months',
       'older than 12 months',
       'before the record',
-      'Median age',
-      'Median age, likely range',
-      'isotope, simulated',
+      'Median age (range not assessed)',
     ]);
+    Object.assign(element, { history: withRange, below: 'isotope' });
+    await settled(element);
+    expect(
+      all(element, 'thead th')
+        .map((cell) => cell.textContent)
+        .slice(-3),
+    ).to.deep.equal(['Median age', 'Median age, likely range', 'isotope, simulated']);
     expect(shown(element)).to.match(/Rows 1 to 25 of 3\d\d/);
     button(element, 'Next rows').click();
     await settled(element);

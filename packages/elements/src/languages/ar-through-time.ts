@@ -53,6 +53,7 @@ export const throughTime: Messages = {
   'history.flowMeans': 'الجدول، مم في اليوم، متوسطات على {days}',
   'history.shares': 'الحصص',
   'history.median': 'العمر الوسيط',
+  'history.medianBare': 'العمر الوسيط (لم يُقدَّر مداه)',
   'history.below': 'ما يُرسم في الأسفل',
   'history.closer': 'أقرب',
   'history.wider': 'أوسع',

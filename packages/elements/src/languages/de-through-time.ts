@@ -53,6 +53,7 @@ export const throughTime: Messages = {
   'history.flowMeans': 'Bach, mm am Tag, Mittel über {days}',
   'history.shares': 'Anteile',
   'history.median': 'Mittleres Alter (Median)',
+  'history.medianBare': 'Median (Bereich nicht bestimmt)',
   'history.below': 'Was darunter gezeichnet ist',
   'history.closer': 'Näher',
   'history.wider': 'Weiter',

@@ -11,7 +11,7 @@ import { bandName } from './words.js';
 /** Buttons that choose what is drawn beneath the flow. */
 export function companions(speech: Speech, history: StationHistory, chosen: string, choose: (name: string) => void): TemplateResult {
   const choice = (name: string, label: string): TemplateResult =>
-    html`<button type="button" part="button" aria-pressed=${chosen === name} @click=${() => choose(name)}>${label}</button>`;
+    html`<button type="button" part="button" aria-pressed=${chosen === name} @click=${() => choose(name)}><bdi>${label}</bdi></button>`;
   return html`<span role="group" class="buttons bare" aria-label=${speech.say('history.below')}
     >${choice('shares', speech.say('history.shares'))}${choice('median', speech.say('history.median'))}${Object.keys(
       history.concentration,

@@ -14,6 +14,7 @@ export const ageHistoryMessages = {
   'history.flowMeans': 'Stream, mm a day, means over {days}',
   'history.shares': 'Shares',
   'history.median': 'Median age',
+  'history.medianBare': 'Median age (range not assessed)',
   'history.below': 'What is drawn beneath',
   'history.closer': 'Closer',
   'history.wider': 'Wider',

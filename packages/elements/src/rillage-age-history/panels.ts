@@ -137,7 +137,7 @@ export function axesOf(
           )
         : ''
     }
-    ${timeMarks(speech.tag, begins, ends, (right - left) / (4.6 * em)).map(({ time, label }) => {
+    ${timeMarks(speech.tag, begins, ends, (right - left) / (4 * em)).map(({ time, label }) => {
       const x = left + ((time - begins) / (ends - begins)) * (right - left);
       return svg`<line class="tick" x1=${x} x2=${x} y1=${upper.bottom} y2=${upper.bottom + 0.4 * em} /><line class="tick" x1=${x} x2=${x} y1=${lower.bottom} y2=${lower.bottom + 0.4 * em} />
         <text class=${x > right - 2 * em ? 'end' : x < left + 2 * em ? '' : 'middle'} x=${x} y=${lower.bottom + 1.6 * em}>${label}</text>`;

@@ -9,6 +9,7 @@ import { age, dayCount } from '../shared/format.js';
 import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
+import { PictureSize } from '../shared/picture-size.js';
 import { StationLink } from '../shared/station-link.js';
 import { textLines } from '../shared/text-lines.js';
 import { cleanText } from '../shared/text.js';
@@ -68,7 +69,6 @@ export class RillageAgeHistory extends LitElement {
     history: { attribute: false },
     samples: { attribute: false },
     messages: { attribute: false },
-    size: { state: true },
     span: { state: true },
     linked: { state: true },
   };
@@ -85,7 +85,6 @@ export class RillageAgeHistory extends LitElement {
   declare samples: Sample[] | null;
   /** Messages of this element to replace, by key. */
   declare messages: Messages | undefined;
-  declare private size: { width: number; em: number };
   /** Steps shown; null: all of them. */
   declare private span: Span | null;
   /** Moment another element of the station points at. */
@@ -98,8 +97,6 @@ export class RillageAgeHistory extends LitElement {
   #stops: number[] = [];
   #drawn: StationHistory | null = null;
   #frame: Frame | null = null;
-  /** Whether the size of the text is known: it is read once there is text, then whenever the element's box changes. */
-  #measured = false;
   #said: string | null = null;
   #still: Still | null = null;
   #cursor = new Cursor(this, () => ({
@@ -115,7 +112,7 @@ export class RillageAgeHistory extends LitElement {
       if (steps) this.#show(changed(span, steps, 1), steps);
     },
   );
-  #observer: ResizeObserver | undefined;
+  #size = new PictureSize(this);
 
   constructor() {
     super();
@@ -124,21 +121,8 @@ export class RillageAgeHistory extends LitElement {
     this.timeZone = 'UTC';
     this.history = null;
     this.samples = null;
-    this.size = { width: 640, em: 13 };
     this.span = null;
     this.linked = null;
-  }
-
-  override connectedCallback(): void {
-    super.connectedCallback();
-    this.#observer = new ResizeObserver(() => requestAnimationFrame(() => this.#measure()));
-    this.#observer.observe(this);
-  }
-
-  override disconnectedCallback(): void {
-    super.disconnectedCallback();
-    this.#observer?.disconnect();
-    this.#observer = undefined;
   }
 
   override render(): TemplateResult {
@@ -194,7 +178,6 @@ export class RillageAgeHistory extends LitElement {
   }
 
   protected override updated(): void {
-    if (!this.#measured) this.#measure();
     const { point } = this.#cursor;
     const step = point === null ? undefined : this.#stops[point];
     const at = step === undefined || !this.#drawn ? null : new Date(endOf(this.#drawn, step)).toISOString();
@@ -206,10 +189,21 @@ export class RillageAgeHistory extends LitElement {
 
   /** What the cursor does not change, kept between its moves. */
   #stillParts(history: StationHistory, span: Span): Still & { frame: Frame } {
-    const from = [history, this.samples, this.below, this.size, span.from, span.to, this.#language.tag, this.messages, this.timeZone];
+    const from = [
+      history,
+      this.samples,
+      this.below,
+      this.#size.width,
+      this.#size.em,
+      span.from,
+      span.to,
+      this.#language.tag,
+      this.messages,
+      this.timeZone,
+    ];
     if (!this.#still?.from.every((value, index) => value === from[index]) || !this.#frame) {
       const language = this.#language;
-      const { width, em } = this.size;
+      const { width, em } = this.#size;
       const below = this.#belowOf(history);
       const each = stepsAPiece(span.from, span.to, width - 4 * em);
       const titles = this.#titles(history, below, each);
@@ -230,7 +224,7 @@ export class RillageAgeHistory extends LitElement {
                 : tracerPanel(history, frame, below, asSamples(this.samples), language)
           }
           ${axesOf(history, frame, language, most, titles, below === 'shares')}`,
-        table: historyRows(language, history, this.#stops, this.timeZone),
+        table: historyRows(language, history, this.#stops, below, this.timeZone),
         summary: summary(language, history, span, this.timeZone),
       };
     }
@@ -243,7 +237,7 @@ export class RillageAgeHistory extends LitElement {
     const upper = each === 1 ? language.say('history.flow') : language.say('history.flowMeans', { days });
     const lower =
       below === 'shares' ? language.say('history.shares') : below === 'median' ? language.say('history.median') : cleanText(below, 40);
-    const { width, em } = this.size;
+    const { width, em } = this.#size;
     return { upper: textLines(upper, width - 4 * em, em), lower: textLines(lower, width - 4 * em, em) };
   }
 
@@ -282,15 +276,6 @@ export class RillageAgeHistory extends LitElement {
     const stride = (this.#stops[1] ?? 1) - (this.#stops[0] ?? 0);
     this.#cursor.show(Math.max(0, Math.min(this.#stops.length - 1, Math.round((step - frame.from) / (stride || 1)))), 0);
   };
-
-  #measure(): void {
-    if (!this.isConnected) return;
-    const width = Math.round(this.clientWidth);
-    const text = this.renderRoot.querySelector('.readout');
-    this.#measured = text !== null;
-    const em = text ? parseFloat(getComputedStyle(text).fontSize) || 13 : 13;
-    if (width > 0 && (width !== this.size.width || em !== this.size.em)) this.size = { width, em };
-  }
 }
 
 /** What the cursor does not change, with what it was made from. */

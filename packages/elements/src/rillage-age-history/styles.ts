@@ -36,6 +36,10 @@ export const ageHistoryStyles = css`
   .table {
     overflow-x: auto;
   }
+  th,
+  td {
+    overflow-wrap: normal;
+  }
   .hair {
     stroke: var(--_hairline);
     stroke-width: 0.75;
@@ -94,6 +98,7 @@ export const ageHistoryStyles = css`
   }
   .legend svg {
     display: inline-block;
+    direction: inherit;
     inline-size: 1.6em;
     block-size: 0.9em;
     vertical-align: -0.05em;

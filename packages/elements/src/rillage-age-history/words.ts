@@ -1,5 +1,5 @@
 import type { Sample, StationHistory } from '@rillage/sdk';
-import { age, ageSpan, moment, number, olderThan, percent } from '../shared/format.js';
+import { age, ageSpan, date, moment, msPerDay, number, olderThan, percent } from '../shared/format.js';
 import { lazyRows } from '../shared/lazy-rows.js';
 import { cleanText } from '../shared/text.js';
 import { endOf, type Span } from './frame.js';
@@ -28,26 +28,26 @@ export function aboutBelow(speech: Speech, history: StationHistory, below: strin
 
 /** What is read at a step: everything (series 0), one class (1 to K), or the median (K + 1). */
 export function readAt(speech: Speech, history: StationHistory, series: number, step: number, zone: string): string {
-  const date = dayOf(speech, history, step, zone);
+  const day = dayOf(speech, history, step, zone);
   const shares = sharesAt(history, step);
-  if (!shares) return speech.say('history.dry', { date });
+  if (!shares) return speech.say('history.dry', { date: day });
   const bands = bandsOf(history);
   if (series === 0) {
     const parts = bands.map((band, index) => `${bandName(speech, band)}: ${percent(speech, shares[index]!)}`);
     const list = parts.join('; ');
-    return `${speech.say('history.readAll', { date, flow: flowText(speech, history.flow[step]), shares: list })}. ${median(speech, history, step, date)}`;
+    return `${speech.say('history.readAll', { date: day, flow: flowText(speech, history.flow[step]), shares: list })}. ${median(speech, history, step, day)}`;
   }
   const band = bands[series - 1];
   return band
-    ? speech.say('history.readClass', { date, share: percent(speech, shares[series - 1]!), name: bandName(speech, band) })
-    : median(speech, history, step, date);
+    ? speech.say('history.readClass', { date: day, share: percent(speech, shares[series - 1]!), name: bandName(speech, band) })
+    : median(speech, history, step, day);
 }
 
-function median(speech: Speech, history: StationHistory, step: number, date: string): string {
+function median(speech: Speech, history: StationHistory, step: number, day: string): string {
   const days = history.medianDays[step];
   if (days === null || days === undefined) return '';
-  if (history.medianBeyondRecord[step] === 1) return speech.say('history.readMedianBeyond', { date });
-  return speech.say('history.readMedian', { date, age: age(speech, days), range: medianSpan(speech, history, step) });
+  if (history.medianBeyondRecord[step] === 1) return speech.say('history.readMedianBeyond', { date: day });
+  return speech.say('history.readMedian', { date: day, age: age(speech, days), range: medianSpan(speech, history, step) });
 }
 
 function medianSpan(speech: Speech, { medianLow, medianHigh }: StationHistory, step: number): string {
@@ -77,39 +77,45 @@ export function summary(speech: Speech, history: StationHistory, { from, to }: S
   });
 }
 
-/** The window as a table: one row for each stop of the cursor. */
+/** The window as a table: one row for each stop of the cursor; of the tracers, the one that is drawn. */
 export function historyRows(
   speech: Speech,
   history: StationHistory,
   stops: number[],
+  below: string,
   zone: string,
 ): { columns: string[]; rows: string[][] } {
   const bands = bandsOf(history);
-  const tracers = Object.keys(history.concentration);
+  const tracer = Object.hasOwn(history.concentration, below) ? history.concentration[below]! : null;
   const significant = number(speech.tag, { maximumSignificantDigits: 4 });
+  const ranged = Boolean(history.medianLow && history.medianHigh);
   const columns = [
     speech.say('history.date'),
     speech.say('history.flow'),
     ...bands.map((band) => bandName(speech, band)),
-    speech.say('history.median'),
-    speech.say('history.medianRange'),
-    ...tracers.map((name) => speech.say('history.simulated', { tracer: cleanText(name, 40) })),
+    speech.say(ranged ? 'history.median' : 'history.medianBare'),
+    ...(ranged ? [speech.say('history.medianRange')] : []),
+    ...(tracer ? [speech.say('history.simulated', { tracer: cleanText(below, 40) })] : []),
   ];
   const rows = lazyRows(stops.length, (index) => {
     const step = stops[index]!;
     const shares = sharesAt(history, step);
     const days = history.medianDays[step];
+    const value = tracer?.[step];
     return [
-      dayOf(speech, history, step, zone),
+      shortDay(speech, history, step, zone),
       flowText(speech, history.flow[step]),
-      ...bands.map((_, index) => (shares ? percent(speech, shares[index]!) : '–')),
+      ...bands.map((_, band) => (shares ? percent(speech, shares[band]!) : '–')),
       days == null ? '–' : history.medianBeyondRecord[step] === 1 ? olderThan(speech, days) : age(speech, days),
-      medianSpan(speech, history, step),
-      ...tracers.map((name) => {
-        const value = history.concentration[name]![step];
-        return value == null ? '–' : significant.format(value);
-      }),
+      ...(ranged ? [medianSpan(speech, history, step)] : []),
+      ...(tracer ? [value == null ? '–' : significant.format(value)] : []),
     ];
   });
   return { columns, rows };
+}
+
+/** As {@link dayOf}, in fewer letters. */
+function shortDay(speech: Speech, history: StationHistory, step: number, zone: string): string {
+  if (history.stepDays < 1) return dayOf(speech, history, step, zone);
+  return date(speech.tag, endOf(history, step) - msPerDay / 2, { dateStyle: 'medium' }, zone);
 }

@@ -8,6 +8,7 @@ import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
 import { PaintWatch, probe, probeStyles } from '../shared/paints.js';
+import { PictureSize } from '../shared/picture-size.js';
 import { StationLink } from '../shared/station-link.js';
 import { theme } from '../shared/theme.js';
 import { version } from '../version.js';
@@ -69,7 +70,6 @@ export class RillageColumnView extends LitElement {
     timeZone: { type: String, attribute: 'time-zone' },
     section: { attribute: false },
     messages: { attribute: false },
-    size: { state: true },
     drawn: { state: true },
   };
 
@@ -85,7 +85,6 @@ export class RillageColumnView extends LitElement {
   declare section: SectionData | null;
   /** Messages of this element to replace, by key. */
   declare messages: Messages | undefined;
-  declare private size: { width: number; em: number };
   /** null before the first attempt, false where there is no canvas. */
   declare private drawn: boolean | null;
 
@@ -113,13 +112,11 @@ export class RillageColumnView extends LitElement {
     this.#bitmap = null;
     this.requestUpdate();
   });
-  #observer: ResizeObserver | undefined;
+  #size = new PictureSize(this);
   /** What the bitmap on the canvas was drawn from. */
   #bitmap: unknown[] | null = null;
   #still: { from: unknown[]; picture: TemplateResult; scale: number; colours: Uint32Array } | null = null;
   #frame: Frame | null = null;
-  /** Whether the size of the text is known: it is read once there is text, then whenever the element's box changes. */
-  #measured = false;
 
   constructor() {
     super();
@@ -128,20 +125,7 @@ export class RillageColumnView extends LitElement {
     this.table = false;
     this.timeZone = 'UTC';
     this.section = null;
-    this.size = { width: 640, em: 13 };
     this.drawn = null;
-  }
-
-  override connectedCallback(): void {
-    super.connectedCallback();
-    this.#observer = new ResizeObserver(() => requestAnimationFrame(() => this.#measure()));
-    this.#observer.observe(this);
-  }
-
-  override disconnectedCallback(): void {
-    super.disconnectedCallback();
-    this.#observer?.disconnect();
-    this.#observer = undefined;
   }
 
   override render(): TemplateResult {
@@ -216,7 +200,6 @@ export class RillageColumnView extends LitElement {
   }
 
   protected override updated(): void {
-    if (!this.#measured) this.#measure();
     const section = asSection(this.section);
     const canvas = this.renderRoot.querySelector('canvas');
     if (!section || !canvas || !this.#frame) return;
@@ -238,9 +221,9 @@ export class RillageColumnView extends LitElement {
   /** What the line does not move, kept between its moves. */
   #stillParts(section: SectionData): { frame: Frame; picture: TemplateResult; scale: number; colours: Uint32Array; tint: Tint } {
     const tint = tintOf(section, this.tint);
-    const from = [section, this.size, this.tint, this.#language.tag, this.messages];
+    const from = [section, this.#size.width, this.#size.em, this.tint, this.#language.tag, this.messages];
     if (!this.#still?.from.every((value, index) => value === from[index]) || !this.#frame) {
-      const { width, em } = this.size;
+      const { width, em } = this.#size;
       const titles = titlesOf(this.#language, section, width, em);
       this.#frame = frameOf(section, width, em, titles);
       this.#still = {
@@ -265,19 +248,12 @@ export class RillageColumnView extends LitElement {
     if (tracers.length === 0) return nothing;
     const chosen = tracers.includes(this.tint) ? this.tint : 'age';
     const button = (tint: string, label: string): TemplateResult =>
-      html`<button type="button" part="button" aria-pressed=${chosen === tint} @click=${() => (this.tint = tint)}>${label}</button>`;
+      html`<button type="button" part="button" aria-pressed=${chosen === tint} @click=${() => (this.tint = tint)}>
+        <bdi>${label}</bdi>
+      </button>`;
     return html`<span role="group" class="buttons bare" aria-label=${this.#language.say('column.tint')}
       >${button('age', this.#language.say('column.age'))}${tracers.map((name) => button(name, tracerName(section, name)))}</span
     >`;
-  }
-
-  #measure(): void {
-    if (!this.isConnected) return;
-    const width = Math.round(this.clientWidth);
-    const text = this.renderRoot.querySelector('.readout');
-    this.#measured = text !== null;
-    const em = text ? parseFloat(getComputedStyle(text).fontSize) || 13 : 13;
-    if (width > 0 && (width !== this.size.width || em !== this.size.em)) this.size = { width, em };
   }
 }
 

@@ -15,7 +15,7 @@ export function sectionView(speech: Speech, section: SectionData, frame: Frame, 
     ${yearLines(speech, section, frame)}
     <rect class="edge" x=${left} y=${top} width=${right - left} height=${bottom - top} />
     ${depthAxis(speech, frame, left, top)}
-    ${timeMarks(speech.tag, frame.from, frame.to, (right - left) / (4.2 * em)).map(
+    ${timeMarks(speech.tag, frame.from, frame.to, (right - left) / (3.9 * em)).map(
       ({ time, label }) => svg`<line class="tick" x1=${frame.x(time)} x2=${frame.x(time)} y1=${bottom} y2=${bottom + 0.4 * em} />
         <text class=${frame.x(time) > right - 2 * em ? 'end' : frame.x(time) < left + 2 * em ? '' : 'middle'} x=${frame.x(time)} y=${bottom + 1.6 * em}>${label}</text>`,
     )}

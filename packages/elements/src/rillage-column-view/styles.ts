@@ -52,6 +52,10 @@ export const columnViewStyles = css`
   .table {
     overflow-x: auto;
   }
+  th,
+  td {
+    overflow-wrap: normal;
+  }
   .hair {
     stroke: var(--_hairline);
     stroke-width: 0.75;
@@ -111,6 +115,7 @@ export const columnViewStyles = css`
   }
   .legend svg {
     display: inline-block;
+    direction: inherit;
     inline-size: 1.6em;
     block-size: 0.9em;
     vertical-align: -0.05em;
@@ -121,7 +126,7 @@ export const columnViewStyles = css`
   }
   @media (forced-colors: active) {
     .layer,
-    .legend rect {
+    .swatch {
       fill: Canvas;
     }
     .year {

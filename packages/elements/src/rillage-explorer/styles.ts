@@ -41,6 +41,10 @@ export const explorerStyles = css`
     font-size: var(--_size-1);
     margin-block-start: 0.4rem;
   }
+  .row > span {
+    flex: 1 1 0;
+    min-inline-size: 60%;
+  }
   input {
     flex: 1 0 100%;
     inline-size: 100%;
