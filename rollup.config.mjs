@@ -59,5 +59,10 @@ export function optionsFor({ input, from, code, file }) {
 export default bundles().map(optionsFor);
 
 function small() {
-  return terser({ module: true, ecma: 2022, compress: { passes: 2 }, format: { comments: /^!/ } });
+  return terser({
+    module: true,
+    ecma: 2022,
+    compress: { passes: 3, pure_getters: true, unsafe_arrows: true, unsafe_methods: true },
+    format: { comments: /^!/ },
+  });
 }

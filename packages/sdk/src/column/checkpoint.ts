@@ -98,69 +98,61 @@ export function restore(runner: ColumnRunner, checkpoint: Checkpoint): void {
   runner.step.previousInflow = scalar('previousInflow');
 }
 
-/** Throws `checkpoint` unless the data has the shape of a checkpoint, with finite numbers and lists of the right lengths. */
+/** Throws `checkpoint` unless the data has the shape of a checkpoint: finite numbers, lists of the right lengths, depths that add up. */
 export function checkCheckpoint(data: unknown): asserts data is Checkpoint {
-  const fail = (path: string, expected: string, received: unknown): never => {
-    throw new RillageError({ code: 'checkpoint', path, expected, received: shorten(received ?? 'nothing') });
+  const need = (good: boolean, path: string, expected: string, received: unknown): void => {
+    if (!good)
+      throw new RillageError({ code: 'checkpoint', path: `checkpoint${path}`, expected, received: shorten(received ?? 'nothing') });
   };
-  const record = (value: unknown): value is Record<string, unknown> => typeof value === 'object' && value !== null;
-  if (!record(data) || data['kind'] !== 'rillage-checkpoint') return fail('checkpoint', 'data made by ColumnRun.checkpoint()', data);
-  if (data['version'] !== 1) {
+  const isRecord = (value: unknown): boolean => typeof value === 'object' && value !== null;
+  const whole = (value: number): boolean => Number.isInteger(value) && value >= 0;
+  need(isRecord(data) && (data as Checkpoint).kind === 'rillage-checkpoint', '', 'data made by ColumnRun.checkpoint()', data);
+  const { version, steps, stepDays, ageResolution, recordStart, catchment, state } = data as Checkpoint;
+  if (version !== 1) {
     throw new RillageError({
       code: 'checkpoint-version',
       path: 'checkpoint.version',
       expected: '1',
-      received: shorten(data['version']),
+      received: shorten(version ?? 'nothing'),
       hint: 'It was made by another version of the SDK; update the SDK, or run the record again.',
     });
   }
-  const { steps, stepDays, ageResolution, catchment, state } = data;
-  if (!(Number.isInteger(steps) && Number(steps) > 0)) fail('checkpoint.steps', 'a whole number of steps', steps);
-  if (!(typeof stepDays === 'number' && stepDays > 0)) fail('checkpoint.stepDays', 'a number of days above 0', stepDays);
-  if (!(typeof ageResolution === 'number' && ageResolution >= 0 && ageResolution <= 0.5)) {
-    fail('checkpoint.ageResolution', 'a number from 0 to 0.5', ageResolution);
+  need(whole(steps) && steps > 0, '.steps', 'a whole number of steps', steps);
+  need(Number.isFinite(stepDays) && stepDays > 0, '.stepDays', 'a number of days above 0', stepDays);
+  need(ageResolution >= 0 && ageResolution <= 0.5, '.ageResolution', 'a number from 0 to 0.5', ageResolution);
+  need(!Number.isNaN(parseInstant(recordStart)), '.recordStart', 'an ISO 8601 instant', recordStart);
+  need(isRecord(catchment), '.catchment', 'a catchment', catchment);
+  need(isRecord(state), '.state', 'the state of a column', state);
+  for (const key of SCALARS) need(Number.isFinite(state[key]), `.state.${key}`, 'a finite number', state[key]);
+  const { count, assumed, total, preRecord } = state as Record<string, number>;
+  need(whole(count), '.state.count', 'a whole number', count);
+  need(whole(assumed) && assumed <= count, '.state.assumed', `a whole number up to ${count}`, assumed);
+  const outflows = Object.keys(catchment.selection ?? {}).length;
+  const tracers = Object.keys(catchment.tracers ?? {}).length;
+  const lengths: Record<string, number> = {
+    lastShare: outflows * count,
+    concentration: tracers * count,
+    ledgers: 4 * tracers,
+    clockTimes: (state['clockTimes'] as number[] | undefined)?.length ?? 0,
+  };
+  lengths['clockAmounts'] = lengths['clockTimes'];
+  for (const key of PER_PARCEL) lengths[key] = count;
+  for (const [key, length] of Object.entries(lengths)) {
+    const list: unknown = state[key];
+    const good = Array.isArray(list) && list.length === length && list.every(Number.isFinite);
+    need(good, `.state.${key}`, `${length} finite numbers`, Array.isArray(list) ? `a list of ${list.length}` : list);
   }
-  if (Number.isNaN(parseInstant(data['recordStart']))) fail('checkpoint.recordStart', 'an ISO 8601 instant', data['recordStart']);
-  if (!record(catchment)) return fail('checkpoint.catchment', 'a catchment', catchment);
-  if (!record(state)) return fail('checkpoint.state', 'the state of a column', state);
-  for (const key of SCALARS) if (!Number.isFinite(state[key])) fail(`checkpoint.state.${key}`, 'a finite number', state[key]);
-  const count = state['count'] as number;
-  if (!(Number.isInteger(count) && count >= 0)) fail('checkpoint.state.count', 'a whole number', count);
-  const outflows = Object.keys((catchment['selection'] as object | undefined) ?? {}).length;
-  const tracers = Object.keys((catchment['tracers'] as object | undefined) ?? {}).length;
-  const lengths: [string, number][] = [
-    ...PER_PARCEL.map((key): [string, number] => [key, count]),
-    ['lastShare', outflows * count],
-    ['concentration', tracers * count],
-    ['ledgers', 4 * tracers],
-  ];
-  for (const [key, length] of lengths) checkList(state[key], length, key, fail);
-  const clock = state['clockTimes'];
-  checkList(clock, Array.isArray(clock) ? clock.length : -1, 'clockTimes', fail);
-  checkList(state['clockAmounts'], (clock as unknown[]).length, 'clockAmounts', fail);
-  checkAmounts(state as Checkpoint['state'], count, fail);
-}
-
-/** Depths of 0 or more that add up to total storage, Ω within 0 and 1, and assumed parcels among those there are. */
-function checkAmounts(state: Checkpoint['state'], count: number, fail: (path: string, expected: string, received: unknown) => never): void {
   const depth = state['depth'] as number[];
-  const total = state['total'] as number;
-  const preRecord = state['preRecord'] as number;
-  if (depth.some((mm) => mm < 0) || preRecord < 0) fail('checkpoint.state.depth', 'depths of 0 mm or more', depth);
-  const stored = depth.reduce((sum, mm) => sum + mm, preRecord);
-  if (!(Math.abs(stored - total) <= 1e-6 * Math.max(1, total)))
-    fail('checkpoint.state.total', `${stored} mm, the sum of what is stored`, total);
   const share = state['lastShare'] as number[];
-  if (share.some((value) => value < -0.5 || value > 1.5)) fail('checkpoint.state.lastShare', 'shares', share);
-  const assumed = state['assumed'] as number;
-  if (!(Number.isInteger(assumed) && assumed >= 0 && assumed <= count))
-    fail('checkpoint.state.assumed', `a whole number up to ${count}`, assumed);
-}
-
-function checkList(list: unknown, length: number, key: string, fail: (path: string, expected: string, received: unknown) => never): void {
-  const good = Array.isArray(list) && list.length === length && list.every((value) => Number.isFinite(value));
-  if (!good)
-    fail(`checkpoint.state.${key}`, `${Math.max(length, 0)} finite numbers`, Array.isArray(list) ? `a list of ${list.length}` : list);
+  need(preRecord >= 0 && depth.every((mm) => mm >= 0), '.state.depth', 'depths of 0 mm or more', depth);
+  need(
+    share.every((value) => Math.abs(value) < 2),
+    '.state.lastShare',
+    'shares',
+    share,
+  );
+  const stored = depth.reduce((sum, mm) => sum + mm, preRecord);
+  need(Math.abs(stored - total) <= 1e-6 * Math.max(1, total), '.state.total', `${stored} mm, the sum of what is stored`, total);
 }
 
 /** Problems of continuing a checkpoint with a forcing: another step, another catchment's outflows, a gap or an overlap in time. */

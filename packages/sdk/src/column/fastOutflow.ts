@@ -24,8 +24,10 @@ export interface FastOutflow {
 }
 
 /** Tabulates one outflow's selection and what bounds the error of few look-ups. */
-export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePiece | null, centre: number, intervals: number): FastOutflow {
+export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePiece | null, intervals: number): FastOutflow {
   const curved = group.filter((active) => !active.overTotal);
+  const centres = curved.map((active) => active.curve!.centre(active.p, active.q) / (scaled === null ? active.inverseScale : 1));
+  const centre = Math.max(1e-6, ...centres);
   const value = (x: number): number => {
     let sum = 0;
     for (const active of curved) {

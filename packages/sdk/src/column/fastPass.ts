@@ -63,15 +63,8 @@ export class FastPass {
     if (!groups.flat().every(isSuited)) return null;
     const moving = groups.map((group) => group.filter((active) => !active.steady));
     if (moving.some((list, f) => list.length > 1 || (list.length === 1 && groups[f].length > 1))) return null;
-    const steadyOverDepth = groups.flat().filter((active) => !active.overTotal && active.steady);
-    let logs = 0;
-    for (const active of steadyOverDepth) logs += Math.log(active.curve!.centre(active.p, active.q) / active.inverseScale);
-    const common = steadyOverDepth.length > 0 ? Math.exp(logs / steadyOverDepth.length) : 1;
-    const outflows = groups.map((group, f) => {
-      const scaled = moving[f][0] ?? null;
-      return describeOutflow(group, scaled, scaled === null ? common : scaled.curve!.centre(scaled.p, scaled.q), INTERVALS);
-    });
-    if (count === 1) outflows.push(describeOutflow([], null, outflows[0].scaled === null ? outflows[0].centre : common, INTERVALS));
+    const outflows = groups.map((group, f) => describeOutflow(group, moving[f][0] ?? null, INTERVALS));
+    if (count === 1) outflows.push(describeOutflow([], null, INTERVALS));
     return new FastPass(outflows, count);
   }
 

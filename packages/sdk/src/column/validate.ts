@@ -157,23 +157,16 @@ function describeTracer(rule: TracerRule, path: string, catchment: Catchment, is
 /** Problems of a forcing and a catchment together: names on both sides, tracers on steps with inflow, drivers that exist. */
 export function describeTogether(forcing: Forcing, catchment: Catchment): Issue[] {
   const issues: Issue[] = [];
-  for (const name of Object.keys(forcing.outflows)) {
-    if (Object.hasOwn(catchment.selection, name)) continue;
+  const { selection } = catchment;
+  const { outflows } = forcing;
+  for (const name of new Set([...Object.keys(outflows), ...Object.keys(selection)])) {
+    const given = Object.hasOwn(outflows, name);
+    if (given && Object.hasOwn(selection, name)) continue;
     issues.push({
-      code: 'selection-missing',
-      path: `selection.${name}`,
-      expected: `a selection for the outflow ${shorten(name)}`,
-      received: 'none',
-      hint: 'forcing.outflows and catchment.selection are keyed by the same names.',
-    });
-  }
-  for (const name of Object.keys(catchment.selection)) {
-    if (Object.hasOwn(forcing.outflows, name)) continue;
-    issues.push({
-      code: 'outflow-missing',
-      path: `outflows.${name}`,
-      expected: `an outflow for the selection ${shorten(name)}`,
-      received: 'none',
+      code: given ? 'selection-missing' : 'outflow-missing',
+      path: `${given ? 'selection' : 'outflows'}.${name}`,
+      expected: `as much as ${given ? 'outflows' : 'selection'} has under ${shorten(name)}`,
+      received: 'nothing',
       hint: 'forcing.outflows and catchment.selection are keyed by the same names.',
     });
   }

@@ -1,4 +1,5 @@
 import type { Curve } from './curve.js';
+import { hermite } from './hermite.js';
 
 const FIRST_INTERVALS = 512;
 const MOST_INTERVALS = 8192;
@@ -47,7 +48,7 @@ export class CurveTable {
     const place = this.coordinate(x) * this.intervals;
     const k = place | 0;
     if (k < this.lowest || k >= this.highest) return this.curve.share(x, this.p, this.q);
-    return hermite(this.nodes, k, place - k);
+    return hermite(this.nodes, 2 * k, 2, place - k);
   }
 
   private coordinate(x: number): number {
@@ -84,7 +85,7 @@ export class CurveTable {
   private goodRange(nodes: Float64Array, intervals: number): { low: number; high: number } {
     const wrong = (k: number): boolean => {
       const exact = this.curve.share(this.inverse((k + 0.5) / intervals), this.p, this.q);
-      return !(Math.abs(hermite(nodes, k, 0.5) - exact) <= TOLERANCE);
+      return !(Math.abs(hermite(nodes, 2 * k, 2, 0.5) - exact) <= TOLERANCE);
     };
     let low = 0;
     let high = intervals;
@@ -99,13 +100,4 @@ export class CurveTable {
     }
     return { low, high };
   }
-}
-
-/** Cubic Hermite value at fraction t of interval k. */
-function hermite(nodes: Float64Array, k: number, t: number): number {
-  const base = 2 * k;
-  const a = nodes[base];
-  const d = nodes[base + 1];
-  const rise = nodes[base + 2] - a;
-  return a + t * (d + t * (3 * rise - 2 * d - nodes[base + 3] + t * (d + nodes[base + 3] - 2 * rise)));
 }

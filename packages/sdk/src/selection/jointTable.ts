@@ -1,4 +1,5 @@
 import type { ActivePiece } from './evaluator.js';
+import { hermite } from './hermite.js';
 
 const INTERVALS = 1024;
 const TOLERANCE = 1e-10;
@@ -94,12 +95,4 @@ function tabulate(active: ActivePiece, nodes: Float64Array, stride: number, cent
     nodes[k * stride + column + 1] += active.weight * (Number.isFinite(slope) ? slope : 0);
   }
   nodes[INTERVALS * stride + column] += active.weight;
-}
-
-function hermite(nodes: Float64Array, base: number, stride: number, t: number): number {
-  const a = nodes[base];
-  const d = nodes[base + 1];
-  const e = nodes[base + stride + 1];
-  const rise = nodes[base + stride] - a;
-  return a + t * (d + t * (3 * rise - 2 * d - e + t * (d + e - 2 * rise)));
 }
