@@ -126,7 +126,7 @@ export class RillageExplorer extends LitElement {
       <label class="row"
         ><span>${say('explorer.form')}</span>
         <select @change=${(event: Event) => this.#choose(outflow, (event.target as HTMLSelectElement).value)}>
-          ${forms.map((name) => html`<option value=${name} ?selected=${name === form}>${this.#word(name)}</option>`)}
+          ${forms.map((name) => html`<option value=${name} .selected=${name === form}>${this.#word(name)}</option>`)}
         </select></label
       >
       ${slidersOf(trial, outflow).map((slider) => this.#slider(slider))}

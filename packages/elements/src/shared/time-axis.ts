@@ -8,12 +8,12 @@ export interface TimeMark {
 }
 
 /**
- * Round moments between two instants: years, months, days or hours, at most `most` of them.
+ * Round moments between two instants: years, months, days or hours, about `most` of them at most.
  * @param from, to  ms since 1970
  */
 export function timeMarks(language: string, from: number, to: number, most: number): TimeMark[] {
   const span = to - from;
-  const unit = units.find(({ length }) => span / length <= most) ?? units[units.length - 1]!;
+  const unit = units.find(({ length }) => Math.floor(span / length) <= most) ?? units[units.length - 1]!;
   const { starts, options } = unit;
   return starts(from, to)
     .filter((time) => time >= from && time <= to)
@@ -58,7 +58,7 @@ const days = (count: number): Unit => ({
   options: { day: 'numeric', month: 'short' },
 });
 const months = (count: number): Unit => ({
-  length: count * 30.4 * msPerDay,
+  length: count * 30.4375 * msPerDay,
   starts: everyMonths(count),
   options: count < 12 ? { month: 'short', year: '2-digit' } : { year: 'numeric' },
 });
