@@ -22,7 +22,7 @@ export interface Frame {
 
 /** @param titles  lines above each panel */
 export function frameOf(width: number, em: number, from: number, to: number, titles: { upper: string[]; lower: string[] }): Frame {
-  const left = 3.4 * em;
+  const left = 3.9 * em;
   const right = width - 1;
   const upperTop = (0.6 + lineHeight * titles.upper.length) * em;
   const upper = { top: upperTop, bottom: upperTop + Math.round(Math.max(13 * em, Math.min(20 * em, 0.3 * width))) };
