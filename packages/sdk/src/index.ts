@@ -6,6 +6,7 @@ export { FORM_NAMES, selectionShare } from './selection/index.js';
 
 export * from './reading/index.js';
 
+export { guessLayout, type LayoutGuess } from './forcing/guessLayout.js';
 export { readForcing, readSampleFiles, type ForcingRead } from './forcing/readForcing.js';
 export { rerunReceipt } from './forcing/rerunReceipt.js';
 export { checkForcing } from './forcing/checkForcing.js';

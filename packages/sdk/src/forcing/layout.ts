@@ -30,7 +30,7 @@ export interface GridLayout {
   stepDays: number;
   /** `hh:mm` at which a step begins on the local clock of `zone` (its standard time where it has daylight saving). */
   dayBegins: string;
-  /** `UTC`, a fixed offset such as `+01:00`, or an IANA name. null: unsettled. */
+  /** `UTC`, a fixed offset such as `+01:00`, or an IANA name. null: that of the first source that has one; unsettled where none has. */
   zone: string | null;
   /** ISO instants or dates that bound the record; null: as far as every series reaches. `to` is where it ends, not the last step. */
   from: string | null;
@@ -38,6 +38,7 @@ export interface GridLayout {
 }
 
 export interface SettledSource {
+  /** How findings call it; '' takes the name of the source handed over. */
   name: string;
   splitAt: ',' | ';' | '\t' | '|' | 'blanks';
   decimalMark: '.' | ',';
@@ -69,7 +70,7 @@ export interface TimeLayout {
   from: number[];
   /** `iso`, `serial1900`, `serial1904`, or a pattern of YYYY YY MM DD MON hh mm ss AP Z. null: unsettled. */
   writtenAs: string | null;
-  /** Of stamps that carry no offset. null: unsettled. */
+  /** Of stamps that carry no offset. null: that of the grid. */
   zone: string | null;
   /** `hh:mm` that a stamp without a clock stands for. */
   readAt: string;

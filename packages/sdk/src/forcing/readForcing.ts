@@ -82,6 +82,7 @@ function checkSettled(texts: readonly SourceText[], layout: SettledLayout, noteb
       received: String(texts.length),
     });
   }
+  layout.sources.forEach((source, index) => (source.name ||= texts[index]?.name ?? `source ${index + 1}`));
   const ask = (path: string, expected: string): void =>
     notebook.problem({
       code: 'layout-unsettled',
@@ -92,9 +93,8 @@ function checkSettled(texts: readonly SourceText[], layout: SettledLayout, noteb
     });
   layout.sources.forEach(({ time }, index) => {
     if (time.writtenAs === null) ask(`sources[${index}].time.writtenAs`, 'how times are written: which of day and month comes first');
-    if (time.zone === null) ask(`sources[${index}].time.zone`, 'the zone of times that state none, such as UTC or +01:00');
   });
-  if (layout.grid.zone === null) ask('grid.zone', 'the zone in which days begin');
+  if (layout.grid.zone === null) ask('grid.zone', 'the zone of times that state none, and in which days begin, such as UTC or +01:00');
   notebook.stopIfAny();
 }
 

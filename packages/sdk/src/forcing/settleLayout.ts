@@ -24,12 +24,10 @@ export function settleLayout(layout: Layout): SettledLayout {
       hint: 'A newer version of the SDK wrote this layout.',
     });
   }
-  const gridZone = (given['grid'] as { zone?: unknown } | null | undefined)?.zone;
-  const commonZone = typeof gridZone === 'string' ? gridZone : null;
   const settled: SettledLayout = {
     kind: 'rillage-layout',
     version: 1,
-    sources: sources.map((source, index) => settleSource(source, `sources[${index}]`, index, commonZone, take)),
+    sources: sources.map((source, index) => settleSource(source, `sources[${index}]`, take)),
     grid: settleGrid(given['grid'], take),
     areaKm2: take.numberOrNull(given['areaKm2'], 'areaKm2', 1e-9, 1e9),
     latitude: take.numberOrNull(given['latitude'], 'latitude', -90, 90),
@@ -41,14 +39,14 @@ export function settleLayout(layout: Layout): SettledLayout {
     limits: settleLimits(given['limits'], take),
   };
   throwIfAny(take.issues);
-  shareZone(settled, given['grid']);
+  shareZone(settled);
   return settled;
 }
 
-/** A zone given once counts for what says nothing of its own; an explicit null stays unsettled. */
-function shareZone(settled: SettledLayout, grid: unknown): void {
-  const saidNothing = (grid as { zone?: unknown } | undefined)?.zone === undefined;
-  if (saidNothing) settled.grid.zone = settled.sources.find(({ time }) => time.zone !== null)?.time.zone ?? null;
+/** A zone given once counts for what says nothing of its own. */
+function shareZone({ sources, grid }: SettledLayout): void {
+  grid.zone ??= sources.find(({ time }) => time.zone !== null)?.time.zone ?? null;
+  for (const { time } of sources) time.zone ??= grid.zone;
 }
 
 function settleGrid(value: unknown, take: Taker): SettledLayout['grid'] {

@@ -34,9 +34,9 @@ const RESERVED = new Set([...Object.getOwnPropertyNames(Object.prototype), 'prot
 const NAMED: ReadonlySet<Holds> = new Set<Holds>(['outflow', 'rainTracer', 'streamTracer', 'driver']);
 
 /** One source's layout with its defaults. */
-export function settleSource(value: unknown, path: string, index: number, commonZone: string | null, take: Taker): SettledSource {
+export function settleSource(value: unknown, path: string, take: Taker): SettledSource {
   const source = take.object(value, path);
-  const time = settleTime(source['time'], `${path}.time`, commonZone, take);
+  const time = settleTime(source['time'], `${path}.time`, take);
   const columns = take
     .list(source['columns'], `${path}.columns`, 10_000)
     .map((column, at) => settleColumn(column, `${path}.columns[${at}]`, take));
@@ -45,7 +45,7 @@ export function settleSource(value: unknown, path: string, index: number, common
   const typesRow = take.whole(source['typesRow'], `${path}.typesRow`, 0, 0, 1000);
   const sampled = columns.every(({ holds }) => holds === 'ignored' || holds === 'streamTracer' || holds === 'rainTracer');
   return {
-    name: take.text(source['name'], `${path}.name`, `source ${index + 1}`),
+    name: take.text(source['name'], `${path}.name`, ''),
     splitAt: take.choice(source['splitAt'], `${path}.splitAt`, [',', ';', '\t', '|', 'blanks'], ','),
     decimalMark: take.choice(source['decimalMark'], `${path}.decimalMark`, ['.', ','], '.'),
     groupMark: take.choice(source['groupMark'], `${path}.groupMark`, ['', ',', '.', ' ', "'"], ''),
@@ -64,7 +64,7 @@ export function settleSource(value: unknown, path: string, index: number, common
   };
 }
 
-function settleTime(value: unknown, path: string, commonZone: string | null, take: Taker): TimeLayout {
+function settleTime(value: unknown, path: string, take: Taker): TimeLayout {
   const time = take.object(value, path);
   const positions = (key: string): number[] =>
     take.list(time[key], `${path}.${key}`, 6).map((position, index) => take.whole(position, `${path}.${key}[${index}]`, 1, 1, 10_000));
@@ -75,7 +75,7 @@ function settleTime(value: unknown, path: string, commonZone: string | null, tak
     columns,
     from: positions('from'),
     writtenAs: take.textOrNull(time['writtenAs'], `${path}.writtenAs`, 'iso'),
-    zone: take.textOrNull(time['zone'], `${path}.zone`, commonZone),
+    zone: take.textOrNull(time['zone'], `${path}.zone`, null),
     readAt: take.clock(time['readAt'], `${path}.readAt`, '00:00'),
     lastDayIncluded: take.flag(time['lastDayIncluded'], `${path}.lastDayIncluded`),
     repeatedHour: take.choice(time['repeatedHour'], `${path}.repeatedHour`, ['inOrder', 'first', 'second', 'refuse'], 'inOrder'),

@@ -29,6 +29,8 @@ export const SPELLINGS: ReadonlyMap<string, string> = new Map([
   ['mgd', '1000000[gal_us]/d'],
   ['gal', '[gal_us]'],
   ['lps', 'L/s'],
+  ['m3s', 'm3/s'],
+  ['mmd', 'mm/d'],
   ['liter', 'L'],
   ['litre', 'L'],
   ['lb', '[lb_av]'],

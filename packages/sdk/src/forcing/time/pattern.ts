@@ -65,16 +65,19 @@ function compile(pattern: string): { expression: RegExp; tokens: string[] } {
       received: pattern,
     });
   }
+  const literal = (text: string): string => text.replace(/[.*+?^${}()|[\]\\]/g, '\\$&').replace(/ +/g, ' +');
   let source = '';
   let at = 0;
   for (const match of pattern.matchAll(TOKENS)) {
-    source += pattern.slice(at, match.index).replace(/[.*+?^${}()|[\]\\]/g, '\\$&');
+    const between = pattern.slice(at, match.index);
+    // AP and Z bring their own blanks, none or more
+    source += literal(match[0] === 'AP' || match[0] === 'Z' ? between.trimEnd() : between);
     at = match.index + match[0].length;
     const besideToken = /^(YY|MM|DD|MON|hh|mm|ss)/.test(pattern.slice(at)) || /(YYYY|YY|MM|DD|hh|mm)$/.test(pattern.slice(0, match.index));
     source += tokenSource(match[0], besideToken);
   }
-  source += pattern.slice(at).replace(/[.*+?^${}()|[\]\\]/g, '\\$&');
-  return { expression: new RegExp(`^${source.replace(/ /g, ' +')}$`, 'i'), tokens };
+  source += literal(pattern.slice(at));
+  return { expression: new RegExp(`^${source}$`, 'i'), tokens };
 }
 
 function tokenSource(token: string, fixed: boolean): string {
