@@ -43,7 +43,7 @@ describe('rillage-column-view: picture', () => {
     const element = await mount('rillage-column-view', { section });
     const picture = part(element, 'picture')!;
     expect(part(element, 'name')!.textContent).to.contain('The water in the ground').and.contain('its range is not assessed');
-    expect(part(element, 'summary')!.textContent).to.contain('January 2000').and.contain('Hatched');
+    expect(part(element, 'summary')!.textContent).to.contain('From January 2000 to December 2009').and.contain('Hatched');
     expect(picture.getAttribute('role')).to.equal('slider');
     expect(picture.tabIndex).to.equal(0);
     expect(picture.getAttribute('aria-valuetext')).to.match(/\d{4}$/);

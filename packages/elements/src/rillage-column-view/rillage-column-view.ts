@@ -3,7 +3,7 @@ import { buttonStyles } from '../shared/buttons.js';
 import { frameStyles } from '../shared/chart-frame.js';
 import { CursorLink } from '../shared/cursor-link.js';
 import { DataTable, tableStyles } from '../shared/data-table.js';
-import { date } from '../shared/format.js';
+import { date, msPerDay } from '../shared/format.js';
 import { inkStyles } from '../shared/ink.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
@@ -237,8 +237,10 @@ export class RillageColumnView extends LitElement {
   }
 
   #about(section: SectionData): string {
+    // The middle of a step: its end may be the next month's first instant.
+    const half = (section.stepDays * msPerDay) / 2;
     const ends = [section.columns[0]!, section.columns[section.columns.length - 1]!].map((column) =>
-      date(this.#language.tag, timeOf(section, column), { month: 'long', year: 'numeric' }, this.timeZone),
+      date(this.#language.tag, timeOf(section, column) - half, { month: 'long', year: 'numeric' }, this.timeZone),
     );
     return this.#language.say(section.storageInformed ? 'column.about' : 'column.aboutOpen', { from: ends[0]!, to: ends[1]! });
   }

@@ -31,7 +31,7 @@ export interface ExploreDetail extends ExploreRequest {
  * its simulated tracer to a `rillage-age-history`. Requests are gathered to one a frame, and an answer given at once is drawn in that frame.
  *
  * @slot - The elements that show the result.
- * @csspart name - The name.
+ * @csspart name - The explorer's name, a heading.
  * @csspart controls - The sliders.
  * @csspart button - The button.
  * @cssprop --rillage-ink - Colour of text and lines. Default `CanvasText`.
