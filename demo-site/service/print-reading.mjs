@@ -1,9 +1,13 @@
 /** Today's reading of the invented catchment in the terminal: makes the station from its CSV files, then reads the file as anyone would. */
 import { readFile } from 'node:fs/promises';
 import { readStation } from '@rillage/sdk';
+import { writeRecordFile } from './build-section.mjs';
 import { writeStationFile } from './build-station.mjs';
 
 const WIDTH = 78;
+
+// what the page of the column computes from
+await writeRecordFile();
 
 const { name, reading } = readStation(await readFile(await writeStationFile(), 'utf8'));
 const percent = (share) => `${(100 * share).toFixed(1)} %`;

@@ -1,4 +1,4 @@
-import { RillageAgePlot, RillageReading, RillageStation } from './classes.js';
+import { RillageAgeHistory, RillageAgePlot, RillageColumnView, RillageExplorer, RillageReading, RillageStation } from './classes.js';
 import { define, defineWithPrefix } from './shared/define.js';
 import { everySpeakerReads } from './shared/language.js';
 import { putMessages, type Messages } from './shared/messages.js';
@@ -22,4 +22,11 @@ export function addMessages(language: string, messages: Messages): void {
   everySpeakerReads();
 }
 
-const elements = { 'age-plot': RillageAgePlot, reading: RillageReading, station: RillageStation };
+const elements = {
+  'age-history': RillageAgeHistory,
+  'age-plot': RillageAgePlot,
+  'column-view': RillageColumnView,
+  explorer: RillageExplorer,
+  reading: RillageReading,
+  station: RillageStation,
+};

@@ -23,4 +23,12 @@ export { runColumnInBackground, type BackgroundOptions } from './workers/runColu
 export { distributionOver, shareAt, shareOver, type WindowOptions, type WindowShare } from './ages/windows.js';
 export { residenceTimes } from './ages/residence.js';
 export { forwardDistribution, type ForwardDistribution } from './ages/forward.js';
-export { makeSection, sectionSteps, type Section } from './ages/section.js';
+export { makeSection, sectionSteps, type Section, type SectionColumn, type SectionOptions } from './ages/section.js';
+
+export { fitCatchment, type FitCatchmentOptions } from './workers/fitCatchment.js';
+export { catchmentsOf, runDraws } from './fit/draws.js';
+export type { Fit, FitOptions } from './fit/fitWith.js';
+export type { FitProblem, WithPriors } from './fit/problem.js';
+export type { ParameterDiagnosis, TracerDiagnosis } from './fit/diagnosis.js';
+export type { Prior } from './fit/priors.js';
+export type { ErrorModel } from './fit/likelihood.js';

@@ -1,2 +1,2 @@
 /** Every task beyond `column`, registered by being imported. */
-export {};
+import './fitTasks.js';
