@@ -4,8 +4,7 @@
  */
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { fileURLToPath, pathToFileURL } from 'node:url';
-import { makeStation, READING_RUN_OPTIONS, readForcing, runColumn, runDraws, writeStation } from '@rillage/sdk';
-import { fitProblem } from './fit-station.mjs';
+import { makeStation, READING_RUN_OPTIONS, readForcing, runColumn, writeStation } from '@rillage/sdk';
 import { catchment, recordFiles, recordLayout, station } from './thessle-brook.mjs';
 
 const dataFolder = new URL('../data/thessle-brook/', import.meta.url);
@@ -28,31 +27,9 @@ export async function buildStation() {
   return { station: made, findings, run, forcing };
 }
 
-/** Runs of the stored fit: a file of this many stays below 2 MB, and its 5 to 95 % are those of all draws within a percent or two. */
-const MEMBERS = 40;
-
-/** The same station from the fit stored with the data: its readings have ranges. null where none is stored (`npm run fit` makes it). */
-export async function buildFittedStation() {
-  const stored = await readFile(new URL('fit.json', dataFolder), 'utf8').catch(() => null);
-  if (stored === null) return null;
-  const fit = JSON.parse(stored);
-  const { problem, read } = await fitProblem();
-  const last = problem.forcing.inflow.length - 1;
-  const bottles = [...new Set(problem.samples.map((sample) => sample.to))].sort();
-  return makeStation({
-    ...station,
-    forcing: problem.forcing,
-    source: runDraws(fit, problem, { ...READING_RUN_OPTIONS, distributionsAt: [last] }, MEMBERS),
-    receipt: read.receipt,
-    language: 'en-GB',
-    converged: fit.converged,
-    samples: { count: bottles.length, last: bottles.at(-1) ?? null },
-  });
-}
-
 /** @returns the file's URL */
 export async function writeStationFile(folder = publicFolder) {
-  const made = (await buildFittedStation()) ?? (await buildStation()).station;
+  const { station: made } = await buildStation();
   await mkdir(folder, { recursive: true });
   const file = new URL(`${made.id}.json`, folder);
   await writeFile(file, writeStation(made));

@@ -1,5 +1,5 @@
 /**
- * Fits the invented catchment to its own bottles: `npm run fit`. Writes data/thessle-brook/fit.json, from which build-station.mjs makes the
+ * Fits the invented catchment to its own bottles: `npm run fit`. Writes data/thessle-brook/fit.json, from which fitted-station.mjs makes the
  * station with ranges. Takes a minute or two on two cores; the same seed gives the same draws.
  */
 import { readFile, writeFile } from 'node:fs/promises';

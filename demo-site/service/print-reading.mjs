@@ -2,14 +2,14 @@
 import { readFile } from 'node:fs/promises';
 import { readStation } from '@rillage/sdk';
 import { writeRecordFile } from './build-section.mjs';
-import { writeStationFile } from './build-station.mjs';
+import { writeFittedStationFile } from './fitted-station.mjs';
 
 const WIDTH = 78;
 
 // what the page of the column computes from
 await writeRecordFile();
 
-const { name, reading } = readStation(await readFile(await writeStationFile(), 'utf8'));
+const { name, reading } = readStation(await readFile(await writeFittedStationFile(), 'utf8'));
 const percent = (share) => `${(100 * share).toFixed(1)} %`;
 const range = (entry, unit) => (entry.range ? `likely ${unit(entry.range.low)} to ${unit(entry.range.high)}` : 'range not assessed');
 const days = (value) => `${Math.round(value)} days`;
