@@ -175,7 +175,11 @@ describe('makeReading(weighted runs)', () => {
       'About 3 litres in 10 of the stream on 14 March 2025 fell as rain within the last 30 days (likely between 2 and 4 in 10).',
     );
     expect(reading.sentences?.[1]).toBe('Half of the water is older than 8 to 14 months.');
-    expect(reading.confidence).toBe('firm');
+    // a narrow range is firm only where it carries the doubt about the input
+    expect(reading.confidence).toBe('tentative');
+    expect(reading.confidenceBecause.join(' ')).toContain('the truth may lie outside it');
+    const carried = { samples: { count: 90, last: '2025-03-01T00:00:00Z' }, inputDoubtInRange: true };
+    expect(makeReading(ensemble(spread), carried).confidence).toBe('firm');
   });
 
   it('follows the weights', () => {
@@ -198,7 +202,7 @@ describe('makeReading(weighted runs)', () => {
   });
 
   it('calls wide ranges, missing samples and short records tentative', () => {
-    const wide = makeReading(ensemble([{ shares: { 30: 0.1 } }, { shares: { 30: 0.6 } }]));
+    const wide = makeReading(ensemble([{ shares: { 30: 0.1 } }, { shares: { 30: 0.6 } }]), { inputDoubtInRange: true });
     expect(wide.confidence).toBe('tentative');
     expect(wide.confidenceBecause).toEqual(['The ranges are wide.', 'No laboratory sample supports the model.']);
   });

@@ -27,6 +27,8 @@ export interface ReadingOptions {
   sources?: { name: string; sha256: string }[];
   /** Whether the fit behind the weights converged. */
   converged?: boolean;
+  /** Whether the weights carry several ways of filling rain concentrations, so that a narrow range may be called firm. Default false. */
+  inputDoubtInRange?: boolean;
   /** mm that left since the record began; needed to judge the balance of a resumed run. */
   balance?: { outflow: number };
   /** Gives the trend. */
@@ -113,6 +115,7 @@ function factsOf(members: Members, step: number, at: string, numbers: StepNumber
     samples: options.samples?.count ?? null,
     daysSinceSample: last === null ? null : daysBetween(last, at),
     converged: options.converged ?? null,
+    inputDoubtInRange: options.inputDoubtInRange ?? false,
   };
 }
 

@@ -106,12 +106,13 @@ export function addToBalance(before: { inflow: number; outflow: number }, forcin
   return { inflow, outflow };
 }
 
-function optionsOf({ language, messages, samples, converged, rules, judge }: StationInput): ReadingOptions {
+function optionsOf({ language, messages, samples, converged, inputDoubtInRange, rules, judge }: StationInput): ReadingOptions {
   return {
     ...(language === undefined ? {} : { language }),
     ...(messages ? { messages } : {}),
     ...(samples ? { samples } : {}),
     ...(converged === undefined ? {} : { converged }),
+    ...(inputDoubtInRange === undefined ? {} : { inputDoubtInRange }),
     ...(rules ? { rules } : {}),
     ...(judge ? { judge } : {}),
   };

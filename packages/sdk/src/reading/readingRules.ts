@@ -60,6 +60,8 @@ export interface ReadingFacts {
   daysSinceSample: number | null;
   /** Whether the fit converged; null where there was none or it was not said. */
   converged: boolean | null;
+  /** Whether the ranges carry the doubt about the input: several ways of filling rain concentrations between bulk samples. */
+  inputDoubtInRange: boolean;
 }
 
 export type WithheldCode =
@@ -94,6 +96,7 @@ export const judgeReading: JudgeReading = (facts, rules) => {
   if (facts.daysSinceSample === null) doubts.push('noSamples');
   else if (facts.daysSinceSample > rules.firmSampleDays) doubts.push('oldSample');
   if (facts.recordDays < rules.firmRecordDays) doubts.push('shortRecord');
+  if (!facts.inputDoubtInRange) doubts.push('inputDoubt');
   return doubts.length > 0
     ? { confidence: 'tentative', because: doubts, withheld }
     : { confidence: 'firm', because: ['narrowRange'], withheld };

@@ -12,7 +12,10 @@ import { seal } from './seal.js';
 
 const DAY_MS = 86_400_000;
 
-export type UpdateOptions = Pick<ReadingOptions, 'language' | 'messages' | 'samples' | 'sources' | 'converged' | 'rules' | 'judge'>;
+export type UpdateOptions = Pick<
+  ReadingOptions,
+  'language' | 'messages' | 'samples' | 'sources' | 'converged' | 'inputDoubtInRange' | 'rules' | 'judge'
+>;
 
 /**
  * One morning's work: the rows that the station does not have yet are added to every member, in time independent of the record's length, and

@@ -51,6 +51,7 @@ export const english = {
   becauseNarrowRange: 'The ranges are narrow, the last sample is recent and the record is long enough.',
   becauseWideRange: 'The ranges are wide.',
   becauseNoSamples: 'No laboratory sample supports the model.',
+  becauseInputDoubt: 'The range does not hold the doubt about rain between its samples, so the truth may lie outside it.',
   becauseOldSample: 'The last laboratory sample is some time back, from {month}.',
   becauseShortRecord: 'The record is short.',
   becauseOther: 'By a rule of the publisher ({code}).',
