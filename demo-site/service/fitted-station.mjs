@@ -3,7 +3,7 @@
  * that of build-station.mjs, a single run.
  */
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
-import { makeStation, READING_RUN_OPTIONS, runDraws, writeStation } from '@rillage/sdk';
+import { fitSummary, makeStation, READING_RUN_OPTIONS, runDraws, writeStation } from '@rillage/sdk';
 import { buildStation } from './build-station.mjs';
 import { fitProblem } from './fit-station.mjs';
 import { station } from './thessle-brook.mjs';
@@ -27,7 +27,7 @@ export async function buildFittedStation() {
     source: runDraws(fit, problem, { ...READING_RUN_OPTIONS, distributionsAt: [last] }, MEMBERS),
     receipt: read.receipt,
     language: 'en-GB',
-    converged: fit.converged,
+    fit: fitSummary(fit),
     samples: { count: bottles.length, last: bottles.at(-1) ?? null },
   });
 }

@@ -26,9 +26,14 @@ export { forwardDistribution, type ForwardDistribution } from './ages/forward.js
 export { makeSection, sectionSteps, type Section, type SectionColumn, type SectionOptions } from './ages/section.js';
 
 export { fitCatchment, type FitCatchmentOptions } from './workers/fitCatchment.js';
-export { catchmentsOf, runDraws } from './fit/draws.js';
-export type { Fit, FitOptions } from './fit/fitWith.js';
-export type { FitProblem, WithPriors } from './fit/problem.js';
+export { whatWouldHelp, type HelpOptions } from './workers/whatWouldHelp.js';
+export type { Help } from './fit/whatWouldHelp.js';
+export { catchmentsOf, fitMembers, runDraws, type FitMember } from './fit/draws.js';
+export type { AlternativeAges, Fit, FitState, FittedAlternative, Predictive, Quantiles } from './fit/fit.js';
+export { fitSummary, type FitSummary } from './fit/summary.js';
+export type { FitOptions } from './fit/fitWith.js';
+export type { Filling, FitProblem, WithPriors } from './fit/problem.js';
 export type { ParameterDiagnosis, TracerDiagnosis } from './fit/diagnosis.js';
+export type { Comparison, CrossCheck } from './fit/crossCheck.js';
 export type { Prior } from './fit/priors.js';
 export type { ErrorModel } from './fit/likelihood.js';

@@ -13,6 +13,7 @@ import {
   type Sample,
 } from '@rillage/sdk';
 import { Random } from '../../../packages/sdk/src/numeric/random.js';
+import { directEvaluator, type Evaluator } from '../../../packages/sdk/src/fit/evaluator.js';
 import { fitWith } from '../../../packages/sdk/src/fit/fitWith.js';
 import { FitModel } from '../../../packages/sdk/src/fit/model.js';
 import { checkProblem } from '../../../packages/sdk/src/fit/problem.js';
@@ -98,16 +99,15 @@ describe('fitCatchment, a synthetic case', () => {
 });
 
 test('fitWith: the same seed gives the same draws however points are shared out', async () => {
-  const model = new FitModel(checkProblem(problem));
-  const evaluate = (points: number[][]) => points.map((point) => model.evaluate(point));
-  const whole = await fitWith(problem, { evaluate: async (points) => evaluate(points) }, { seed: 3, evaluations: 120 });
-  const parts = await fitWith(
-    problem,
-    { evaluate: async (points) => (await Promise.all(points.map(async (point) => evaluate([point])))).flat() },
-    { seed: 3, evaluations: 120 },
-  );
-  expect(parts.draws).toEqual(whole.draws);
-  expect(whole.converged).toBe(false);
+  const whole = directEvaluator([new FitModel(checkProblem(problem))]);
+  const parts: Evaluator = {
+    ...whole,
+    evaluate: async (points, k) => (await Promise.all(points.map((point) => whole.evaluate([point], k)))).flat(),
+  };
+  const options = { seed: 3, evaluations: 120 };
+  const first = await fitWith(problem, whole, options);
+  expect((await fitWith(problem, parts, options)).alternatives[0].draws).toEqual(first.alternatives[0].draws);
+  expect(first.converged).toBe(false);
 });
 
 test('fitCatchment: a signal ends it within 50 ms with what there is, marked partial', async () => {

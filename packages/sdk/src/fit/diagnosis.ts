@@ -4,6 +4,8 @@ import type { ChainDiagnosis } from './convergence.js';
 import { drawMeasured } from './likelihood.js';
 import { klingGupta2009, klingGupta2012, nashSutcliffe } from './metrics.js';
 import type { Evaluation, FitModel } from './model.js';
+import { meanOver } from './sampleWindow.js';
+import { rankCorrelation } from './rankCorrelation.js';
 import { autocorrelation, intervalCoverage, type Coverage } from './predictive.js';
 import { priorQuantile } from './priorMath.js';
 import type { PlacedPrior } from './priorPaths.js';
@@ -74,54 +76,85 @@ export interface TracerDiagnosis {
   kge2012: number;
   coverage50: Coverage;
   coverage90: Coverage;
-  /** By sample, in time order: instant, measured, predictive median and 5 to 95 %. */
-  residuals: { at: string; measured: number; median: number; low: number; high: number }[];
-  /** Of the residuals at lag 1, in samples. */
-  lagOne: number;
+  /** By sample, in time order: instant, flow (mm/day), measured, predictive median and 5 to 95 %. */
+  residuals: { at: string; flow: number; measured: number; median: number; low: number; high: number }[];
+  /** Of measured − median at lags 1 to 5, in samples; NaN where there are too few. */
+  autocorrelation: number[];
+  /** Rank correlation of measured − median with time, and with flow: 0 where nothing is left to explain. */
+  withTime: number;
+  withFlow: number;
 }
 
-/** Measured against simulated, tracer by tracer; empty without evaluations. Predictive draws add the error model's scatter. */
-export function diagnoseTracers(
-  model: FitModel,
-  points: readonly number[][],
-  evaluations: readonly Evaluation[],
-  seed: number,
-): Record<string, TracerDiagnosis> {
+/** A draw of the published mixture. */
+export interface Member {
+  model: FitModel;
+  point: readonly number[];
+  evaluation: Evaluation;
+}
+
+const LAGS = 5;
+
+/** Measured against simulated, tracer by tracer; empty without members. Predictive draws add the error model's scatter. */
+export function diagnoseTracers(members: readonly Member[], seed: number): Record<string, TracerDiagnosis> {
   const result: Record<string, TracerDiagnosis> = {};
-  if (evaluations.length === 0) return result;
+  if (members.length === 0) return result;
   const random = Random.fromSeed(seed).split('predictive');
-  const errors = points.map((z) => model.settled(model.values(z)).errors);
-  for (const tracer of new Set(model.samples.map((sample) => sample.tracer))) {
-    const rows = model.samples.flatMap((sample, s) => {
-      if (sample.tracer !== tracer || sample.censored !== undefined || Number.isNaN(evaluations[0].simulated[s])) return [];
-      const predictive = Float64Array.from(evaluations, ({ simulated }, d) =>
-        drawMeasured(errors[d][tracer], simulated[s], sample.error ?? 0, random),
+  const errors = members.map(({ model, point }) => model.settled(model.values(point)).errors);
+  const { samples, windows, forcing } = members[0].model;
+  for (const tracer of new Set(samples.map((sample) => sample.tracer))) {
+    const rows = samples.flatMap((sample, s) => {
+      if (sample.tracer !== tracer || sample.censored !== undefined || Number.isNaN(members[0].evaluation.simulated[s])) return [];
+      const predictive = Float64Array.from(members, ({ evaluation }, d) =>
+        drawMeasured(errors[d][tracer], evaluation.simulated[s], sample.error ?? 0, random),
       ).sort();
-      const plain = Float64Array.from(evaluations, ({ simulated }) => simulated[s]).sort();
-      const at = (p: number): number => quantileSorted(predictive, p);
+      const plain = Float64Array.from(members, ({ evaluation }) => evaluation.simulated[s]).sort();
+      const flow = forcing.outflows[sample.of ?? 'discharge'];
       return [
         {
           at: sample.to,
+          flow: meanOver(windows[s], new Float64Array(flow.length).fill(1), flow),
           measured: sample.value,
           simulated: quantileSorted(plain, 0.5),
-          ends: [at(0.05), at(0.25), at(0.5), at(0.75), at(0.95)],
+          ends: ENDS.map((p) => quantileSorted(predictive, p)),
         },
       ];
     });
-    const measured = rows.map((row) => row.measured);
-    const simulated = rows.map((row) => row.simulated);
-    const end = (k: number): number[] => rows.map((row) => row.ends[k]);
-    const misses = rows.map((row) => row.measured - row.simulated);
-    result[tracer] = {
-      count: rows.length,
-      nse: nashSutcliffe(measured, simulated),
-      kge2009: klingGupta2009(measured, simulated),
-      kge2012: klingGupta2012(measured, simulated),
-      coverage50: intervalCoverage(measured, end(1), end(3), 0.5),
-      coverage90: intervalCoverage(measured, end(0), end(4), 0.9),
-      residuals: rows.map((row) => ({ at: row.at, measured: row.measured, median: row.ends[2], low: row.ends[0], high: row.ends[4] })),
-      lagOne: rows.length > 3 ? autocorrelation(misses, 1)[1] : NaN,
-    };
+    result[tracer] = diagnoseRows(rows);
   }
   return result;
+}
+
+const ENDS = [0.05, 0.25, 0.5, 0.75, 0.95];
+
+function diagnoseRows(rows: { at: string; flow: number; measured: number; simulated: number; ends: number[] }[]): TracerDiagnosis {
+  const measured = rows.map((row) => row.measured);
+  const simulated = rows.map((row) => row.simulated);
+  const end = (k: number): number[] => rows.map((row) => row.ends[k]);
+  const misses = rows.map((row) => row.measured - row.simulated);
+  const correlations = rows.length > 2 * LAGS ? Array.from(autocorrelation(misses, LAGS)).slice(1) : new Array<number>(LAGS).fill(NaN);
+  return {
+    count: rows.length,
+    nse: nashSutcliffe(measured, simulated),
+    kge2009: klingGupta2009(measured, simulated),
+    kge2012: klingGupta2012(measured, simulated),
+    coverage50: intervalCoverage(measured, end(1), end(3), 0.5),
+    coverage90: intervalCoverage(measured, end(0), end(4), 0.9),
+    residuals: rows.map(({ at, flow, measured: value, ends }) => ({
+      at,
+      flow,
+      measured: value,
+      median: ends[2],
+      low: ends[0],
+      high: ends[4],
+    })),
+    autocorrelation: correlations,
+    withTime: rankCorrelation(
+      misses,
+      rows.map((_row, k) => k),
+    ),
+    withFlow: rankCorrelation(
+      misses,
+      rows.map((row) => row.flow),
+    ),
+  };
 }

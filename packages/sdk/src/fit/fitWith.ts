@@ -1,116 +1,139 @@
-import type { Finding } from '../contract.js';
 import { RillageError } from '../errors.js';
-import { diagnoseParameters, diagnoseTracers, type ParameterDiagnosis, type TracerDiagnosis } from './diagnosis.js';
-import { leaveOneOut } from './leaveOneOut.js';
-import { FitModel, type Evaluation } from './model.js';
-import { checkProblem, type FitProblem } from './problem.js';
-import { keptDraws, runSampler, samplerProgress, summariseSampler, type RunSamplerOptions } from './sampler/run.js';
-import { openSampler } from './sampler/sampler.js';
-import type { SamplerState } from './sampler/state.js';
-
-/** Draws that the samples support, with the diagnosis. Plain data. */
-export interface Fit {
-  kind: 'rillage-fit';
-  version: 1;
-  seed: number;
-  /** Every unknown's R-hat and effective sizes reached their bounds. Numbers of a fit that did not converge are not to be published. */
-  converged: boolean;
-  /** Stopped by the caller before it had finished. */
-  partial: boolean;
-  evaluations: number;
-  /** Share of points drawn from the prior for which no run is possible. */
-  impossibleShare: number;
-  parameters: ParameterDiagnosis[];
-  tracers: Record<string, TracerDiagnosis>;
-  /** [draws][unknowns] in the parameters' own units. */
-  draws: number[][];
-  /** Expected log predictive density by Pareto-smoothed leave-one-out, its standard error, and the worst Pareto shape. */
-  predictive: { density: number; error: number; worstShape: number } | null;
-  samples: { count: number; first: string; last: string };
-  findings: Finding[];
-  /** Of the sampler, for going on; null when finished. */
-  state: SamplerState | null;
-}
-
-/** Where points are evaluated: in this thread or in any number of workers, with the same answer. */
-export interface Evaluator {
-  evaluate(points: number[][]): Promise<Evaluation[]>;
-}
+import { sha256Hex } from '../numeric/hash.js';
+import { evaluateDraws, type EvaluatedAlternative } from './evaluateDraws.js';
+import type { Evaluator } from './evaluator.js';
+import type { Fit, FitState } from './fit.js';
+import { FitModel } from './model.js';
+import { checkProblem, problemText, refuseOther, type CheckedProblem, type FitProblem } from './problem.js';
+import { publish } from './publish.js';
+import { keptDraws, runSampler, samplerProgress, summariseSampler, unlessAborted } from './sampler/run.js';
+import { openSampler, type Sampler } from './sampler/sampler.js';
 
 export interface FitOptions {
+  /** Whole number, 0 or more; the same seed gives the same draws. */
   seed: number;
   signal?: AbortSignal;
-  onProgress?: (progress: { done: number; phase: string; evaluations: number; acceptance: number; rHat: number }) => void;
-  /** Evaluations at most. Default 40,000. */
+  /** `done` is a share 0..1 of the whole; `timeLeft` in seconds, a guess, NaN at first. */
+  onProgress?: (progress: {
+    done: number;
+    timeLeft: number;
+    phase: string;
+    alternative: string;
+    evaluations: number;
+    acceptance: number;
+    rHat: number;
+  }) => void;
+  /** Evaluations at most, for each alternative. Default 40,000. */
   evaluations?: number;
-  /** Draws kept. Default 400. */
+  /** Draws kept of each alternative. Default 400. */
   draws?: number;
+  /** Converged when R-hat is at or below this. Default 1.01. */
+  rHat?: number;
+  /** … and bulk and tail effective sizes at or above this. Default 400. */
+  effectiveSize?: number;
+  /** Redistributions of the rain that carry its doubt, where the problem has `rainSamples`. Default 100; 0 leaves it out. */
+  redistributions?: number;
   /** State of a fit that was stopped, of the same problem and seed. */
-  resume?: SamplerState;
+  resume?: FitState;
 }
 
-/** The sampling itself, over any evaluator. @throws RillageError as `checkProblem`; `fit-impossible` where the prior allows no run */
-export async function fitWith(problem: FitProblem, evaluator: Evaluator, options: FitOptions, pause?: () => Promise<void>): Promise<Fit> {
+/**
+ * Searches, samples and weighs every alternative of a problem, over any evaluator.
+ * @throws RillageError as `checkProblem`; `fit-impossible` where no prior allows a run; `fit-mismatch` where `resume` is of another fit
+ */
+export async function fitWith(problem: FitProblem, given: Evaluator, options: FitOptions, pause?: () => Promise<void>): Promise<Fit> {
+  const evaluator = abortable(given, options.signal);
   const checked = checkProblem(problem);
-  const model = new FitModel(checked);
-  const sampler = openSampler(
-    options.resume ?? {
-      dimensions: checked.priors.length,
-      seed: options.seed,
-      ...(options.evaluations === undefined ? {} : { evaluations: options.evaluations }),
-    },
-  );
-  const onProgress = options.onProgress;
-  const call: RunSamplerOptions = {
-    ...(options.signal === undefined ? {} : { signal: options.signal }),
-    ...(pause === undefined ? {} : { pause }),
-  };
+  const models = checked.alternatives.map((_alternative, k) => new FitModel(checked, k));
+  const fingerprint = sha256Hex(new TextEncoder().encode(problemText(problem)));
+  if (options.resume !== undefined) {
+    refuseOther(fingerprint, options.resume.problem, 'The saved state belongs to another problem.');
+    refuseOther(`seed ${options.seed}`, `seed ${options.resume.seed}`, 'The saved state belongs to another seed.');
+  }
+  const samplers: Sampler[] = [];
+  const evaluated: EvaluatedAlternative[] = [];
   let partial = false;
   try {
-    await runSampler(sampler, async (points) => (await evaluator.evaluate(points)).map(({ logDensity }) => logDensity), {
-      ...call,
-      ...(onProgress === undefined
-        ? {}
-        : {
-            onProgress: () => {
-              const { share, phase, evaluations, acceptance, rHat } = samplerProgress(sampler.state);
-              onProgress({ done: share, phase, evaluations, acceptance, rHat });
-            },
-          }),
-    });
+    for (let k = 0; k < models.length; k++) {
+      const sampler = samplerOf(k, models[k].priors.length, options);
+      samplers.push(sampler);
+      await sampleOne(sampler, k, checked, evaluator, options, pause);
+      evaluated.push(await evaluateDraws(models[k], sampler, evaluator, options));
+    }
   } catch (error) {
     if (!(error instanceof RillageError && error.code === 'aborted')) throw error;
     partial = true;
   }
-  const summary = summariseSampler(sampler.state);
-  if (summary.outcome === 'noPossiblePoint') {
-    throw new RillageError({
-      code: 'fit-impossible',
-      path: 'catchment',
-      expected: 'a prior that allows at least some runs',
-      received: `${summary.prior.impossible} impossible of ${summary.prior.tried}`,
-      hint: 'Most often initial storage is too small for the balance, or a driven parameter leaves its domain.',
-    });
-  }
-  const { points } = keptDraws(sampler.state, options.draws ?? 400);
-  const evaluations = partial ? [] : await evaluator.evaluate(points);
-  const draws = points.map((z) => model.values(z));
-  const loo = evaluations.length >= 25 ? leaveOneOut(evaluations.map(({ pointwise }) => pointwise)) : null;
-  const { samples } = checked;
-  return {
-    kind: 'rillage-fit',
+  const state: FitState = {
+    kind: 'rillage-fit-state',
     version: 1,
+    problem: fingerprint,
     seed: options.seed,
-    converged: summary.converged && !partial,
-    partial,
-    evaluations: summary.evaluations,
-    impossibleShare: summary.prior.tried > 0 ? summary.prior.impossible / summary.prior.tried : 0,
-    parameters: diagnoseParameters(model.priors, points, draws, summary.diagnosis),
-    tracers: diagnoseTracers(model, points, evaluations, options.seed),
-    draws,
-    predictive: loo === null ? null : { density: loo.elpd, error: loo.standardError, worstShape: Math.max(...loo.shape) },
-    samples: { count: samples.length, first: samples[0].from, last: samples[samples.length - 1].to },
-    findings: checked.findings,
-    state: partial ? sampler.state : null,
+    samplers: samplers.map((sampler) => sampler.state),
   };
+  for (let k = evaluated.length; k < samplers.length; k++) evaluated.push(unfinished(models[k], samplers[k], options.draws));
+  refuseImpossible(evaluated);
+  return publish(checked, evaluated, options.seed, partial ? state : null);
+}
+
+function samplerOf(index: number, dimensions: number, { resume, seed, evaluations, rHat, effectiveSize }: FitOptions): Sampler {
+  const saved = resume?.samplers[index];
+  return openSampler(
+    saved ?? {
+      dimensions,
+      seed: seed + index,
+      ...(evaluations === undefined ? {} : { evaluations }),
+      ...(rHat === undefined ? {} : { rHat }),
+      ...(effectiveSize === undefined ? {} : { effectiveSize }),
+    },
+  );
+}
+
+async function sampleOne(
+  sampler: Sampler,
+  index: number,
+  { alternatives }: CheckedProblem,
+  evaluator: Evaluator,
+  { signal, onProgress }: FitOptions,
+  pause: (() => Promise<void>) | undefined,
+): Promise<void> {
+  const report = (): void => {
+    const { share, phase, evaluations, acceptance, rHat } = samplerProgress(sampler.state);
+    const done = (index + share) / alternatives.length;
+    onProgress?.({ done, timeLeft: NaN, phase, alternative: alternatives[index].name, evaluations, acceptance, rHat });
+  };
+  await runSampler(sampler, async (points) => (await evaluator.evaluate(points, index)).map(({ logDensity }) => logDensity), {
+    ...(signal === undefined ? {} : { signal }),
+    ...(pause === undefined ? {} : { pause }),
+    ...(onProgress === undefined ? {} : { onProgress: report }),
+  });
+}
+
+/** What there is of an alternative that was stopped: draws, and nothing worked out about them. */
+function unfinished(model: FitModel, sampler: Sampler, count = 400): EvaluatedAlternative {
+  const { points } = keptDraws(sampler.state, count);
+  const summary = summariseSampler(sampler.state);
+  return { model, summary, points, evaluations: [], looPointwise: null, predictive: null, widened: null, ages: [] };
+}
+
+/** Every answer, or an error as soon as the signal is raised. */
+function abortable(evaluator: Evaluator, signal: AbortSignal | undefined): Evaluator {
+  return {
+    evaluate: (...call) => unlessAborted(evaluator.evaluate(...call), signal),
+    redistribute: (...call) => unlessAborted(evaluator.redistribute(...call), signal),
+    ages: (...call) => unlessAborted(evaluator.ages(...call), signal),
+  };
+}
+
+function refuseImpossible(evaluated: readonly EvaluatedAlternative[]): void {
+  const impossible = evaluated.filter(({ summary }) => summary.outcome === 'noPossiblePoint');
+  if (impossible.length < evaluated.length || impossible.length === 0) return;
+  const { prior } = impossible[0].summary;
+  throw new RillageError({
+    code: 'fit-impossible',
+    path: 'catchment',
+    expected: 'a prior that allows at least some runs',
+    received: `${prior.impossible} impossible of ${prior.tried}`,
+    hint: 'Most often initial storage is too small for the balance, or a driven parameter leaves its domain.',
+  });
 }

@@ -1,5 +1,9 @@
 import type { Catchment, Finding, Forcing, Sample } from '../contract.js';
 import { RillageError, shorten, throwIfAny, type Issue } from '../errors.js';
+import { startColumn } from '../column/index.js';
+import { expandAlternatives, type Alternative } from './alternatives.js';
+import { isBeyondModel } from './beyondModel.js';
+import { checkSamples } from './checkSamples.js';
 import { checkErrorModel, type ErrorModel } from './likelihood.js';
 import { collectPriors, substitute, type PlacedPrior } from './priorPaths.js';
 import { priorQuantile } from './priorMath.js';
@@ -14,6 +18,15 @@ export type WithPriors<T> = T extends number
       ? { [K in keyof T]: WithPriors<T[K]> }
       : T;
 
+/** A way of filling daily concentrations of rain from bulk samples, as `fillRainConcentration` knows them. */
+export interface Filling {
+  rule: 'bulkConstant' | 'seasonalPlusResidual' | 'randomRedistribution';
+  /** Steps with inflow that no sample covers. Default `stop`. */
+  uncovered?: 'stop' | 'amountWeightedMean' | 'seasonalCurve';
+  /** For `randomRedistribution`. Default 1. */
+  seed?: number;
+}
+
 /** What is to be fitted to what. */
 export interface FitProblem {
   forcing: Forcing;
@@ -21,117 +34,114 @@ export interface FitProblem {
   samples: readonly Sample[];
   /** By tracer: how measurements may differ from the simulation. */
   errors: Record<string, WithPriors<ErrorModel>>;
+  /** By name: catchments to be weighed against `catchment`, with other selection forms or other rules. */
+  otherCatchments?: Record<string, WithPriors<Catchment>>;
+  /**
+   * Bulk samples behind the forcing's rain concentrations. With them the doubt about single days of rain goes into the draws, and
+   * `fillings` may be compared.
+   */
+  rainSamples?: readonly Sample[];
+  /** Ways of filling daily concentrations anew from `rainSamples`, weighed against each other. Default: only the forcing as it is. */
+  fillings?: readonly Filling[];
 }
 
-/** A problem that holds together: its unknowns, and what is odd about it. */
+/** A problem that holds together: what is to be tried, and what is odd about it. */
 export interface CheckedProblem {
   problem: FitProblem;
+  /** Unknowns of the first alternative. */
   priors: PlacedPrior[];
+  /** Every catchment under every filling; the first is `catchment` under the first filling. */
+  alternatives: Alternative[];
   /** Samples inside the record, in time order. */
   samples: Sample[];
   findings: Finding[];
 }
 
+const FIELDS = ['forcing', 'catchment', 'samples', 'errors', 'otherCatchments', 'rainSamples', 'fillings'];
+
 /**
  * Checks a problem as a whole. The unknowns are the priors of catchment and errors together, in the order of their keys.
- * @throws RillageError, a batch: `no-samples`, `no-unknowns`, `sample-…`, `errors-missing`, `all-censored`, and whatever priors and error
- *   models are refused for
+ * @throws RillageError, a batch: `unknown-field`, `no-samples`, `samples-outside`, `no-unknowns`, `sample-…`, `errors-missing`,
+ *   `all-censored`, `fillings-without-samples`, whatever priors and error models are refused for, and what `fillRainConcentration` throws
  */
 export function checkProblem(problem: FitProblem): CheckedProblem {
-  const { forcing, catchment, errors } = problem;
-  const priors = collectPriors({ catchment, errors });
+  const { catchment, errors } = problem;
+  const catchments: [string, WithPriors<Catchment>][] = [['catchment', catchment], ...Object.entries(problem.otherCatchments ?? {})];
+  const priors = catchments.map(([, own]) => collectPriors({ catchment: own, errors }));
   const issues: Issue[] = [];
-  const findings: Finding[] = [];
   for (const key of Object.keys(problem)) {
-    if (!['forcing', 'catchment', 'samples', 'errors'].includes(key)) {
-      issues.push({ code: 'unknown-field', path: key, expected: 'forcing, catchment, samples and errors only', received: shorten(key) });
-    }
+    if (!FIELDS.includes(key))
+      issues.push({ code: 'unknown-field', path: key, expected: `${FIELDS.join(', ')} only`, received: shorten(key) });
   }
-  if (priors.length === 0)
-    issues.push({ code: 'no-unknowns', path: 'catchment', expected: 'at least one prior in place of a number', received: 'none' });
-  if (!Array.isArray(problem.samples) || problem.samples.length === 0) {
-    throw new RillageError([...issues, { code: 'no-samples', path: 'samples', expected: 'at least one sample', received: 'none' }]);
-  }
-  const start = Date.parse(forcing.start);
-  const end = start + forcing.inflow.length * forcing.stepDays * 86_400_000;
-  const kept: Sample[] = [];
-  let outside = 0;
-  problem.samples.forEach((sample, index) => {
-    const found = describeSample(sample, index, problem);
-    issues.push(...found);
-    if (found.length > 0) return;
-    if (Date.parse(sample.from) < start || Date.parse(sample.to) > end || Date.parse(sample.from) >= end) outside += 1;
-    else kept.push(sample);
+  catchments.forEach(([name], k) => {
+    const path = k === 0 ? 'catchment' : `otherCatchments.${name}`;
+    if (priors[k].length === 0)
+      issues.push({ code: 'no-unknowns', path, expected: 'at least one prior in place of a number', received: 'none' });
   });
-  throwIfAny(issues);
-  if (outside > 0)
-    findings.push(finding('samples-outside', `${outside} of ${problem.samples.length} samples outside the record`, 'Left out.', outside));
-  if (kept.length === 0)
-    throw new RillageError({ code: 'samples-outside', path: 'samples', expected: 'samples inside the record', received: 'none of them' });
+  issues.push(...checkFillings(problem));
+  const { samples, findings } = checkSamples(problem, issues);
   const middle = substitute<{ errors: Record<string, unknown> }>(
     { catchment, errors },
-    priors,
-    priors.map(({ prior }) => priorQuantile(prior, 0.5)),
+    priors[0],
+    priors[0].map(({ prior }) => priorQuantile(prior, 0.5)),
   );
-  for (const [tracer, own] of byTracer(kept)) {
-    if (errors[tracer] === undefined)
-      issues.push({
-        code: 'errors-missing',
-        path: `errors.${tracer}`,
-        expected: 'an error model for every tracer with samples',
-        received: 'none',
-      });
-    else issues.push(...checkErrorModel(middle.errors[tracer], `errors.${tracer}`));
-    const units = new Set(own.map(({ unit }) => unit));
-    if (units.size > 1)
-      issues.push({ code: 'sample-units', path: 'samples', expected: `one unit for ${shorten(tracer)}`, received: [...units].join(', ') });
-    if (own.every(({ censored }) => censored !== undefined)) {
-      issues.push({
-        code: 'all-censored',
-        path: 'samples',
-        expected: `a value of ${shorten(tracer)} that is not censored`,
-        received: 'limits only',
-      });
-    }
-    if (own.length === 1) findings.push(finding('one-sample', `one sample of ${tracer}`, 'Used; it can inform next to nothing.', 1));
-    if (own.length > 2 && own.every(({ value }) => value === own[0].value)) {
-      findings.push(
-        finding('constant-tracer', `every sample of ${tracer} has one value`, 'Used; a constant tracer carries no ages.', own.length),
-      );
-    }
-    const times = own.map(({ from, to, of }) => `${from} ${to} ${of ?? ''}`);
-    const twice = times.length - new Set(times).size;
-    if (twice > 0) findings.push(finding('samples-twice', `${twice} samples of ${tracer} at the time of another`, 'All used.', twice));
+  for (const tracer of new Set(samples.map((sample) => sample.tracer))) {
+    const path = `errors.${tracer}`;
+    if (Object.hasOwn(errors, tracer)) issues.push(...checkErrorModel(middle.errors[tracer], path));
+    else issues.push({ code: 'errors-missing', path, expected: 'an error model for every tracer with samples', received: 'none' });
   }
   throwIfAny(issues);
-  kept.sort((a, b) => Date.parse(a.to) - Date.parse(b.to));
-  return { problem, priors, samples: kept, findings };
+  const alternatives = expandAlternatives(problem, catchments, priors, samples);
+  alternatives.forEach((alternative) => refuseBroken(alternative, errors));
+  return { problem, priors: priors[0], alternatives, samples, findings };
 }
 
-function describeSample(sample: Sample, index: number, problem: FitProblem): Issue[] {
-  const path = `samples[${index}]`;
-  const issues: Issue[] = [];
-  const need = (good: boolean, field: string, expected: string, received: unknown): void => {
-    if (!good) issues.push({ code: 'sample-invalid', path: `${path}.${field}`, expected, received: shorten(received ?? 'nothing') });
-  };
-  const from = Date.parse(sample.from);
-  const to = Date.parse(sample.to);
-  need(Number.isFinite(from), 'from', 'an ISO 8601 instant', sample.from);
-  need(Number.isFinite(to) && !(to < from), 'to', 'an ISO 8601 instant, not before from', sample.to);
-  need(Number.isFinite(sample.value), 'value', 'a finite concentration', sample.value);
-  need(sample.error === undefined || sample.error >= 0, 'error', 'a standard error of 0 or more', sample.error);
-  const tracers = (problem.catchment.tracers ?? {}) as Record<string, unknown>;
-  need(Object.hasOwn(tracers, sample.tracer), 'tracer', 'a tracer of the catchment', sample.tracer);
-  need(Object.hasOwn(problem.forcing.outflows, sample.of ?? 'discharge'), 'of', 'an outflow of the forcing', sample.of ?? 'discharge');
-  return issues;
+/** A form or a field that does not exist is an error at once, not a run that is impossible wherever it is tried. */
+function refuseBroken({ catchment, priors, forcing }: Alternative, errors: FitProblem['errors']): void {
+  const medians = priors.map(({ prior }) => priorQuantile(prior, 0.5));
+  try {
+    startColumn(substitute<{ catchment: Catchment }>({ catchment, errors }, priors, medians).catchment, forcing);
+  } catch (error) {
+    if (!isBeyondModel(error)) throw error;
+  }
 }
 
-export function byTracer(samples: readonly Sample[]): Map<string, Sample[]> {
-  const groups = new Map<string, Sample[]>();
-  for (const sample of samples) groups.set(sample.tracer, [...(groups.get(sample.tracer) ?? []), sample]);
-  return groups;
+function checkFillings({ fillings, rainSamples }: FitProblem): Issue[] {
+  if (fillings === undefined) return [];
+  if (!Array.isArray(fillings) || fillings.length === 0)
+    return [{ code: 'no-fillings', path: 'fillings', expected: 'at least one filling, or no field', received: shorten(fillings) }];
+  if (rainSamples === undefined || rainSamples.length === 0)
+    return [{ code: 'fillings-without-samples', path: 'rainSamples', expected: 'the bulk samples to fill from', received: 'none' }];
+  return (fillings as readonly Filling[]).flatMap((filling, k) =>
+    Object.keys(filling)
+      .filter((key) => !['rule', 'uncovered', 'seed'].includes(key))
+      .map((key) => ({ code: 'unknown-field', path: `fillings[${k}].${key}`, expected: 'rule, uncovered or seed', received: key })),
+  );
 }
 
-function finding(code: string, seen: string, done: string, count: number): Finding {
-  return { code, severity: 'warning', where: 'samples', seen, done, count };
+/** The fit's problem as far as a saved state has to be of the same one. @returns text that differs where a problem does */
+export function problemText(problem: FitProblem): string {
+  const { forcing } = problem;
+  const sums = (series: Record<string, Float64Array>): [string, number][] =>
+    Object.entries(series).map(([name, values]) => [
+      name,
+      values.reduce((sum, value, k) => (value === value ? sum + value * (1 + k) : sum), 0),
+    ]);
+  return JSON.stringify({
+    ...problem,
+    forcing: [
+      forcing.start,
+      forcing.stepDays,
+      forcing.inflow.length,
+      sums({ inflow: forcing.inflow }),
+      sums(forcing.outflows),
+      sums(forcing.inflowConcentration),
+    ],
+  });
+}
+
+/** @throws RillageError `fit-mismatch` where a state, a fit or a seed belongs to something else */
+export function refuseOther(expected: string, received: string, hint: string): void {
+  if (expected === received) return;
+  throw new RillageError({ code: 'fit-mismatch', path: 'fit', expected: shorten(expected), received: shorten(received), hint });
 }

@@ -29,6 +29,12 @@ export interface ReadingOptions {
   converged?: boolean;
   /** Whether the weights carry several ways of filling rain concentrations, so that a narrow range may be called firm. Default false. */
   inputDoubtInRange?: boolean;
+  /** Days from the first sample to the last. */
+  sampleSpanDays?: number;
+  /** Whether samples miss their predictive intervals more often than these claim. */
+  coverageTooNarrow?: boolean;
+  /** Whether the seasonal cycle's young water fraction agrees with the fitted one. */
+  crossCheckAgrees?: boolean;
   /** mm that left since the record began; needed to judge the balance of a resumed run. */
   balance?: { outflow: number };
   /** Gives the trend. */
@@ -115,6 +121,9 @@ function factsOf(members: Members, step: number, at: string, numbers: StepNumber
     samples: options.samples?.count ?? null,
     daysSinceSample: last === null ? null : daysBetween(last, at),
     converged: options.converged ?? null,
+    sampleSpanDays: options.sampleSpanDays ?? null,
+    coverageTooNarrow: options.coverageTooNarrow ?? null,
+    crossCheckAgrees: options.crossCheckAgrees ?? null,
     inputDoubtInRange: options.inputDoubtInRange ?? false,
   };
 }

@@ -1,6 +1,7 @@
 import { type DistributionWithRange, type Forcing, type ReadingSource, type Receipt, type Station } from '../contract.js';
 import { RillageError } from '../errors.js';
 import { distributionAt } from './distribution.js';
+import { fitFacts } from './fitFacts.js';
 import { historyOf } from './history.js';
 import { readingOf, type ReadingOptions } from './makeReading.js';
 import { readMembers } from './members.js';
@@ -19,7 +20,7 @@ export interface StationInput extends Omit<ReadingOptions, 'at' | 'station' | 'h
   forcing: Forcing;
   /** A run, or a fit's weighted runs, asked for with `READING_RUN_OPTIONS` and `distributionsAt` its last step. */
   source: ReadingSource;
-  /** Summary of the fit that made the members. */
+  /** Summary of the fit that made the members: what `fitSummary` gives. The reading's confidence rests on it. */
   fit?: unknown;
   receipt?: Receipt;
   signedOff?: { by: string; at: string };
@@ -106,13 +107,13 @@ export function addToBalance(before: { inflow: number; outflow: number }, forcin
   return { inflow, outflow };
 }
 
-function optionsOf({ language, messages, samples, converged, inputDoubtInRange, rules, judge }: StationInput): ReadingOptions {
+function optionsOf(input: StationInput): ReadingOptions {
+  const { language, messages, samples, rules, judge } = input;
   return {
     ...(language === undefined ? {} : { language }),
     ...(messages ? { messages } : {}),
     ...(samples ? { samples } : {}),
-    ...(converged === undefined ? {} : { converged }),
-    ...(inputDoubtInRange === undefined ? {} : { inputDoubtInRange }),
+    ...fitFacts(input.fit, input),
     ...(rules ? { rules } : {}),
     ...(judge ? { judge } : {}),
   };

@@ -22,8 +22,14 @@ export interface ReadingRules {
   firmWidth: number;
   /** a last sample no older than this, days, */
   firmSampleDays: number;
-  /** and a record of at least this, days. */
+  /** a record of at least this, days, */
   firmRecordDays: number;
+  /** at least so many samples, */
+  firmSamples: number;
+  /** spread over at least this, days, so that they saw every season, */
+  firmSpanDays: number;
+  /** and a share of water from before the record no greater than this. */
+  firmPreRecord: number;
 }
 
 export const DEFAULT_READING_RULES: Readonly<ReadingRules> = {
@@ -38,6 +44,9 @@ export const DEFAULT_READING_RULES: Readonly<ReadingRules> = {
   firmWidth: 0.2,
   firmSampleDays: 62,
   firmRecordDays: 730,
+  firmSamples: 24,
+  firmSpanDays: 365,
+  firmPreRecord: 0.5,
 };
 
 /** What the rules look at. */
@@ -60,6 +69,12 @@ export interface ReadingFacts {
   daysSinceSample: number | null;
   /** Whether the fit converged; null where there was none or it was not said. */
   converged: boolean | null;
+  /** Days from the first sample to the last; null where not known. */
+  sampleSpanDays: number | null;
+  /** Whether samples fall outside their predictive intervals more often than these claim; null where it was not looked at. */
+  coverageTooNarrow: boolean | null;
+  /** Whether the young water fraction from the seasonal cycle agrees with the fitted one; null where there is no cycle to look at. */
+  crossCheckAgrees: boolean | null;
   /** Whether the ranges carry the doubt about the input: several ways of filling rain concentrations between bulk samples. */
   inputDoubtInRange: boolean;
 }
@@ -96,6 +111,11 @@ export const judgeReading: JudgeReading = (facts, rules) => {
   if (facts.daysSinceSample === null) doubts.push('noSamples');
   else if (facts.daysSinceSample > rules.firmSampleDays) doubts.push('oldSample');
   if (facts.recordDays < rules.firmRecordDays) doubts.push('shortRecord');
+  const few = facts.samples !== null && facts.samples < rules.firmSamples;
+  if (few || (facts.sampleSpanDays !== null && facts.sampleSpanDays < rules.firmSpanDays)) doubts.push('fewSamples');
+  if (facts.coverageTooNarrow === true) doubts.push('missedSamples');
+  if (facts.crossCheckAgrees === false) doubts.push('secondOpinion');
+  if (facts.preRecordShare > rules.firmPreRecord) doubts.push('muchOlder');
   if (!facts.inputDoubtInRange) doubts.push('inputDoubt');
   return doubts.length > 0
     ? { confidence: 'tentative', because: doubts, withheld }

@@ -2,6 +2,7 @@ import { type Forcing, type Reading, type Station, type StationMember, type Weig
 import { resumeColumn } from '../column/index.js';
 import { RillageError } from '../errors.js';
 import { distributionAt } from './distribution.js';
+import { fitFacts, type FitFacts } from './fitFacts.js';
 import { historyOf, joinHistory } from './history.js';
 import { readingOf, type ReadingOptions } from './makeReading.js';
 import { addToBalance, roundedDistribution } from './makeStation.js';
@@ -12,10 +13,7 @@ import { seal } from './seal.js';
 
 const DAY_MS = 86_400_000;
 
-export type UpdateOptions = Pick<
-  ReadingOptions,
-  'language' | 'messages' | 'samples' | 'sources' | 'converged' | 'inputDoubtInRange' | 'rules' | 'judge'
->;
+export type UpdateOptions = Pick<ReadingOptions, 'language' | 'messages' | 'samples' | 'sources' | 'rules' | 'judge' | keyof FitFacts>;
 
 /**
  * One morning's work: the rows that the station does not have yet are added to every member, in time independent of the record's length, and
@@ -45,13 +43,15 @@ export function updateStation(station: Station, newForcing: Forcing, options: Up
   const history = joinHistory(station.history, historyOf(members));
   const balance = station.balance && addToBalance(station.balance, rows);
   const samples = options.samples ?? station.samples;
+  const facts = fitFacts(station.fit, options);
   const reading = readingOf(members, {
     ...options,
     language: options.language ?? station.reading.language,
     station: { id: station.id, name: station.name, ...(station.invented ? { invented: true } : {}) },
     sources: options.sources ?? station.reading.evidence.sources,
+    ...facts,
     // A fit that had not settled has not settled overnight.
-    converged: options.converged ?? !station.reading.withheld.some(({ code }) => code === 'fitNotConverged'),
+    converged: facts.converged ?? !station.reading.withheld.some(({ code }) => code === 'fitNotConverged'),
     history,
     ...(balance ? { balance } : {}),
     ...(samples ? { samples } : {}),

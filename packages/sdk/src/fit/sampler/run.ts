@@ -130,7 +130,7 @@ function worstOf(diagnosis: readonly ChainDiagnosis[]): { rHat: number; effectiv
 }
 
 /** The answer, or an error as soon as the signal is raised. */
-function unlessAborted<T>(answer: Promise<T>, signal: AbortSignal | undefined): Promise<T> {
+export function unlessAborted<T>(answer: Promise<T>, signal: AbortSignal | undefined): Promise<T> {
   if (!signal) return answer;
   return new Promise((resolve, reject) => {
     const stop = (): void => {

@@ -54,6 +54,10 @@ export const english = {
   becauseInputDoubt: 'The range does not hold the doubt about rain between its samples, so the truth may lie outside it.',
   becauseOldSample: 'The last laboratory sample is some time back, from {month}.',
   becauseShortRecord: 'The record is short.',
+  becauseFewSamples: 'The laboratory samples are few, or do not cover a year.',
+  becauseMissedSamples: 'More samples fall outside what the model expects than should.',
+  becauseSecondOpinion: 'The seasons in the samples, taken by themselves, point to another share of young water.',
+  becauseMuchOlder: 'Much of the water is older than the record.',
   becauseOther: 'By a rule of the publisher ({code}).',
 
   caution:
