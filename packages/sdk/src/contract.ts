@@ -67,7 +67,7 @@ export type Selection =
   | { form: 'mixture'; parts: { weight: Amount; selection: Selection }[] };
 
 export interface RunOptions {
-  /** Relative age width at which old parcels may merge; 0 keeps every age. Default 0.05. */
+  /** Relative age width at which old parcels may merge; 0 keeps every age. Default 0.1. */
   ageResolution?: number;
   /** Ages, days. */
   youngerThan?: number[];

@@ -1,24 +1,15 @@
 import type { Catchment, Checkpoint } from '../contract.js';
 import { RillageError, shorten, type Issue } from '../errors.js';
+import { STRIDE } from './entryCurves.js';
 import type { ColumnRunner } from './runner.js';
 import { parseInstant } from './validate.js';
 
 /** A parcel that an earlier run followed: kept apart from its neighbours, as that run kept it. */
 const FOLLOWED_BEFORE = 0x7fffffff;
-const PER_PARCEL = ['depth', 'entryStart', 'entryEnd', 'enteredBefore', 'enteredAfter', 'followed'] as const;
-const SCALARS = [
-  'count',
-  'assumed',
-  'preRecord',
-  'total',
-  'previousInflow',
-  'entered',
-  'initial',
-  'in',
-  'out',
-  'wetnessLow',
-  'wetnessHigh',
-] as const;
+const PER_PARCEL = ['depth', 'entryStart', 'entryEnd', 'followed'] as const;
+const OF_STATE = ['count', 'assumed', 'preRecord', 'total'] as const;
+const OF_BALANCE = ['initial', 'in', 'out'] as const;
+const SCALARS = [...OF_STATE, ...OF_BALANCE, 'previousInflow', 'entered', 'wetnessLow', 'wetnessHigh'] as const;
 
 /** The state of a runner at the end of its last step, as JSON-safe data that gives the same bits back. */
 export function makeCheckpoint(runner: ColumnRunner): Checkpoint {
@@ -30,23 +21,19 @@ export function makeCheckpoint(runner: ColumnRunner): Checkpoint {
     return flat;
   };
   const data: Checkpoint['state'] = {
-    count,
-    assumed: state.assumed,
-    preRecord: state.preRecord,
-    total: state.total,
     previousInflow: runner.step.previousInflow,
     entered: runner.entered,
-    initial: balance.initial,
-    in: balance.in,
-    out: balance.out,
     wetnessLow: runner.wetness[0],
     wetnessHigh: runner.wetness[1],
     clockTimes: [...(clock?.times ?? [])],
     clockAmounts: [...(clock?.amounts ?? [])],
     lastShare: state.lastShare.flatMap((list) => Array.from(list.subarray(0, count))),
+    curves: Array.from(state.curves.data.subarray(0, STRIDE * count)),
     concentration: rows(state.concentration, state.tracers),
     ledgers: runner.ledgers.flatMap((ledger) => [ledger.entered, ledger.left, ledger.reacted, ledger.held]),
   };
+  for (const key of OF_STATE) data[key] = state[key];
+  for (const key of OF_BALANCE) data[key] = balance[key];
   for (const key of PER_PARCEL) data[key] = Array.from(state[key].subarray(0, count));
   return {
     kind: 'rillage-checkpoint',
@@ -68,16 +55,15 @@ export function restore(runner: ColumnRunner, checkpoint: Checkpoint): void {
   const list = (key: string): number[] => data[key] as number[];
   const count = scalar('count');
   state.reserve(count);
-  state.count = count;
-  state.assumed = scalar('assumed');
-  state.preRecord = scalar('preRecord');
-  state.total = scalar('total');
+  for (const key of OF_STATE) state[key] = scalar(key);
+  for (const key of OF_BALANCE) runner.balance[key] = scalar(key);
   for (const key of PER_PARCEL) state[key].set(list(key));
   for (let i = 0; i < count; i++) if (state.followed[i] >= 0) state.followed[i] = FOLLOWED_BEFORE;
   const spread = (from: number[], to: Float64Array, n: number): void => {
     for (let row = 0; row < n; row++) for (let i = 0; i < count; i++) to[row * state.capacity + i] = from[row * count + i];
   };
   state.lastShare.forEach((share, f) => share.set(list('lastShare').slice(f * count, (f + 1) * count)));
+  state.curves.data.set(list('curves'));
   spread(list('concentration'), state.concentration, state.tracers);
   if (clock !== null) {
     clock.times = [...list('clockTimes')];
@@ -93,7 +79,6 @@ export function restore(runner: ColumnRunner, checkpoint: Checkpoint): void {
   });
   runner.before = checkpoint.steps;
   runner.entered = scalar('entered');
-  runner.balance = { initial: scalar('initial'), in: scalar('in'), out: scalar('out') };
   runner.wetness = [scalar('wetnessLow'), scalar('wetnessHigh')];
   runner.step.previousInflow = scalar('previousInflow');
 }
@@ -131,6 +116,7 @@ export function checkCheckpoint(data: unknown): asserts data is Checkpoint {
   const tracers = Object.keys(catchment.tracers ?? {}).length;
   const lengths: Record<string, number> = {
     lastShare: outflows * count,
+    curves: STRIDE * count,
     concentration: tracers * count,
     ledgers: 4 * tracers,
     clockTimes: (state['clockTimes'] as number[] | undefined)?.length ?? 0,

@@ -1,4 +1,11 @@
+import { EntryCurves } from './entryCurves.js';
+
 const FIRST_CAPACITY = 256;
+/**
+ * Near the surface a selection's density changes within a parcel: how much two may give together, times how much of the depth above their
+ * older edge they are.
+ */
+const NEAR_TOP = 0.003;
 
 /**
  * The storage as parcels, oldest at index 0, youngest last. Times are in steps since the record began (negative during spin-up),
@@ -12,9 +19,8 @@ export class ColumnState {
   /** [capacity] entry interval of each parcel. */
   entryStart = new Float64Array(0);
   entryEnd = new Float64Array(0);
-  /** [capacity] cumulative inflow of the record at both ends of the entry interval, mm. */
-  enteredBefore = new Float64Array(0);
-  enteredAfter = new Float64Array(0);
+  /** How what is left lies within each parcel, so that an age can be placed inside a merged one. */
+  readonly curves = new EntryCurves();
   /** [outflows × capacity] Ω last seen at the older edge of each parcel: the predictor of the next midpoint. */
   readonly lastShare: Float64Array<ArrayBuffer>[];
   /** [tracers × capacity] */
@@ -52,8 +58,7 @@ export class ColumnState {
     this.before = grown(this.before, size);
     this.entryStart = grown(this.entryStart, size);
     this.entryEnd = grown(this.entryEnd, size);
-    this.enteredBefore = grown(this.enteredBefore, size);
-    this.enteredAfter = grown(this.enteredAfter, size);
+    this.curves.reserve(size);
     for (let f = 0; f < this.outflows; f++) {
       this.lastShare[f] = grown(this.lastShare[f], size);
       this.cumulative[f] = grown(this.cumulative[f], size);
@@ -71,8 +76,7 @@ export class ColumnState {
     this.depth[i] = 0;
     this.entryStart[i] = entryStart;
     this.entryEnd[i] = entryEnd;
-    this.enteredBefore[i] = enteredBefore;
-    this.enteredAfter[i] = enteredAfter;
+    this.curves.start(i, enteredBefore, enteredAfter);
     this.followed[i] = followed;
     for (let f = 0; f < this.outflows; f++) this.lastShare[f][i] = 0;
   }
@@ -117,6 +121,9 @@ export class ColumnState {
   merge(now: number, resolution: number, largest: number): void {
     let kept = 0;
     let assumed = 0;
+    // mm from the surface to the older edge of the parcel kept last
+    let edge = this.total - this.preRecord;
+    let width = 0;
     for (let i = 0; i < this.count; i++) {
       if (this.depth[i] <= 0 && this.followed[i] < 0) continue;
       const last = kept - 1;
@@ -128,9 +135,13 @@ export class ColumnState {
         this.followed[last] < 0 &&
         isAssumed === last < assumed &&
         this.entryEnd[i] - this.entryStart[last] <= resolution * (now - this.entryEnd[i]) &&
-        this.feeds(last, i) <= largest;
-      if (joins) this.join(last, i);
-      else {
+        this.feeds(last, i) <= Math.min(largest, (NEAR_TOP * edge) / (width + this.depth[i]));
+      if (joins) {
+        width += this.depth[i];
+        this.join(last, i);
+      } else {
+        edge -= width;
+        width = this.depth[i];
         if (kept !== i) this.move(kept, i);
         kept++;
         if (isAssumed) assumed = kept;
@@ -161,15 +172,14 @@ export class ColumnState {
     }
     this.depth[older] = a + b;
     this.entryEnd[older] = this.entryEnd[younger];
-    this.enteredAfter[older] = this.enteredAfter[younger];
+    this.curves.join(older, younger, a / (a + b));
   }
 
   private move(to: number, from: number): void {
     this.depth[to] = this.depth[from];
     this.entryStart[to] = this.entryStart[from];
     this.entryEnd[to] = this.entryEnd[from];
-    this.enteredBefore[to] = this.enteredBefore[from];
-    this.enteredAfter[to] = this.enteredAfter[from];
+    this.curves.move(to, from);
     this.followed[to] = this.followed[from];
     for (let f = 0; f < this.outflows; f++) this.lastShare[f][to] = this.lastShare[f][from];
     for (let t = 0; t < this.tracers; t++) this.concentration[t * this.capacity + to] = this.concentration[t * this.capacity + from];

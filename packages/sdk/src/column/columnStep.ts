@@ -49,7 +49,7 @@ export class ColumnStep {
 
   /** Share of an outflow that a merged parcel may give: within it, ages and concentrations are no longer told apart. */
   get largestMerged(): number {
-    return this.largestPart < 1 ? 0.0015 : this.fast !== null ? 0.006 : 0.0045;
+    return this.largestPart < 1 ? 0.0015 : this.fast !== null ? 0.02 : 0.0045;
   }
 
   /** The inflow of the step before: part of the state, since the choice of method looks at it. */

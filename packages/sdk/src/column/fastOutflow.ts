@@ -9,8 +9,7 @@ const CHECK_LOWEST = -5;
 
 /** One outflow as the fast pass sees it: Ω = T(S / scale) + slope · S / total. */
 export interface FastOutflow {
-  /** [2 × intervals + 2] value and rise of T over each interval of √x from 0 to `reach`; T is complete beyond. */
-  table: Float64Array;
+  /** √x at which T is complete and its table ends. */
   reach: number;
   centre: number;
   /** The piece whose scale is driven; null when the table is in mm. */
@@ -23,8 +22,17 @@ export interface FastOutflow {
   density: Float64Array;
 }
 
-/** Tabulates one outflow's selection and what bounds the error of few look-ups. */
-export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePiece | null, intervals: number): FastOutflow {
+/**
+ * Tabulates one outflow's selection and what bounds the error of few look-ups.
+ * @param table  [4 (intervals + 1)] takes value and rise of T over each interval of √x from 0 to `reach`, at `column` of every four
+ */
+export function describeOutflow(
+  group: readonly ActivePiece[],
+  scaled: ActivePiece | null,
+  table: Float64Array,
+  column: number,
+): FastOutflow {
+  const intervals = table.length / 4 - 1;
   const curved = group.filter((active) => !active.overTotal);
   const centres = curved.map((active) => active.curve!.centre(active.p, active.q) / (scaled === null ? active.inverseScale : 1));
   const centre = Math.max(1e-6, ...centres);
@@ -48,16 +56,15 @@ export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePie
   let end = centre;
   while (whole - value(end) > COMPLETE) end *= 1.5;
   const reach = Math.sqrt(end);
-  const table = new Float64Array(2 * intervals + 2);
   let before = 0;
   for (let k = 0; k < intervals; k++) {
     const root = (reach * (k + 1)) / intervals;
     const after = k + 1 < intervals ? value(root * root) : whole;
-    table[2 * k] = before;
-    table[2 * k + 1] = after - before;
+    table[4 * k + column] = before;
+    table[4 * k + column + 1] = after - before;
     before = after;
   }
-  table[2 * intervals] = whole;
+  table[4 * intervals + column] = whole;
   const curvature = new Float64Array(CHECK_NODES);
   const bend = new Float64Array(CHECK_NODES);
   const density = new Float64Array(CHECK_NODES);
@@ -71,10 +78,12 @@ export function describeOutflow(group: readonly ActivePiece[], scaled: ActivePie
     density[n] = Math.max(slopeAt(x), n + 1 < CHECK_NODES ? density[n + 1] : 0);
   }
   const slope = group.filter((active) => active.overTotal).reduce((sum, active) => sum + active.weight, 0);
-  return { table, reach, centre, scaled, slope, curvature, bend, density };
+  return { reach, centre, scaled, slope, curvature, bend, density };
 }
 
 /** x of a check node; nodes are spaced evenly in log x. */
 export function depthOfNode(node: number, centre: number): number {
-  return centre * 10 ** (CHECK_LOWEST + (CHECK_DECADES * node) / LAST_NODE);
+  return centre * nodes[node];
 }
+
+const nodes = Float64Array.from({ length: CHECK_NODES }, (_value, node) => 10 ** (CHECK_LOWEST + (CHECK_DECADES * node) / LAST_NODE));

@@ -3,7 +3,7 @@ import type { ColumnState } from './columnState.js';
 import { describeOutflow, depthOfNode, LAST_NODE, type FastOutflow } from './fastOutflow.js';
 
 /** Of every table; a constant of this file, since one that is imported costs a fifth of the loop's time. */
-const INTERVALS = 2048;
+const INTERVALS = 1024;
 
 /** Errors allowed in the share of an outflow taken above a boundary in a step, for one look-up and for four. */
 const ONE_TOLERANCE = 5e-4;
@@ -31,8 +31,6 @@ export class FastPass {
   readonly taken: Float64Array;
   /** [2] Ω last looked up: after `four`, at the end of the step. */
   readonly pair = new Float64Array(2);
-  /** [4 (INTERVALS + 1)] value and rise of both outflows, interleaved. */
-  private readonly table: Float64Array;
   private readonly slope0: number;
   private readonly slope1: number;
   /** Table intervals per √mm. */
@@ -44,9 +42,10 @@ export class FastPass {
   private constructor(
     private readonly outflows: FastOutflow[],
     private readonly count: number,
+    /** [4 (INTERVALS + 1)] value and rise of both outflows, interleaved. */
+    private readonly table: Float64Array,
   ) {
     this.taken = new Float64Array(count);
-    this.table = interleaved(outflows[0].table, outflows[1].table);
     this.slope0 = outflows[0].slope;
     this.slope1 = outflows[1].slope;
     this.perRoot0 = INTERVALS / outflows[0].reach;
@@ -63,9 +62,9 @@ export class FastPass {
     if (!groups.flat().every(isSuited)) return null;
     const moving = groups.map((group) => group.filter((active) => !active.steady));
     if (moving.some((list, f) => list.length > 1 || (list.length === 1 && groups[f].length > 1))) return null;
-    const outflows = groups.map((group, f) => describeOutflow(group, moving[f][0] ?? null, INTERVALS));
-    if (count === 1) outflows.push(describeOutflow([], null, INTERVALS));
-    return new FastPass(outflows, count);
+    const table = new Float64Array(4 * (INTERVALS + 1));
+    const outflows = [0, 1].map((f) => describeOutflow(groups[f] ?? [], moving[f]?.[0] ?? null, table, 2 * f));
+    return new FastPass(outflows, count, table);
   }
 
   /**
@@ -96,22 +95,28 @@ export class FastPass {
       const curvature = (flux[f] * reach) / 24;
       const lag = (1 - AHEAD) * 0.25 * flux[f] * flux[f] * inverse * inverse * days * days * (rate + lastRate);
       const bend = (flux[f] * reach * reach) / 2880;
-      let node = this.oneNode[f];
-      while (node < LAST_NODE && curvature * one.curvature[node] + lag * one.density[node] * one.density[node] > allowedOne) node++;
-      while (node > 0 && curvature * one.curvature[node - 1] + lag * one.density[node - 1] * one.density[node - 1] <= allowedOne) node--;
-      this.oneNode[f] = node;
-      const oneDepth = node === 0 ? 0 : depthOfNode(node, one.centre) / inverse;
+      const oneDepth = this.leastDepth(
+        this.oneNode,
+        f,
+        (n) => curvature * one.curvature[n] + lag * one.density[n] * one.density[n] <= allowedOne,
+      );
       if (oneDepth > this.oneFrom) this.oneFrom = oneDepth;
-      node = this.fourNode[f];
-      while (node < LAST_NODE && bend * one.bend[node] > allowedFour) node++;
-      while (node > 0 && bend * one.bend[node - 1] <= allowedFour) node--;
-      this.fourNode[f] = node;
-      const fourDepth = node === 0 ? 0 : depthOfNode(node, one.centre) / inverse;
+      const fourDepth = this.leastDepth(this.fourNode, f, (n) => bend * one.bend[n] <= allowedFour);
       if (fourDepth > this.fourFrom) this.fourFrom = fourDepth;
     }
     // a look-up must not stand for a path that begins near the singular start
     if (this.oneFrom < rate * days) this.oneFrom = rate * days;
     if (this.fourFrom < 0.5 * rate * days) this.fourFrom = 0.5 * rate * days;
+  }
+
+  /** mm from which on a look-up is good, found from the node that was it in the step before. */
+  private leastDepth(nodes: Int32Array, f: number, good: (node: number) => boolean): number {
+    const { centre, scaled } = this.outflows[f];
+    let node = nodes[f];
+    while (node < LAST_NODE && !good(node)) node++;
+    while (node > 0 && good(node - 1)) node--;
+    nodes[f] = node;
+    return node === 0 ? 0 : depthOfNode(node, centre) / (scaled === null ? 1 : scaled.inverseScale);
   }
 
   /**
@@ -315,15 +320,4 @@ function isSuited(active: ActivePiece): boolean {
   if (active.curve.name === 'uniform') return active.steady;
   if (active.overTotal) return false;
   return active.steady || active.piece.weights.length === 0 ? active.table !== null || !active.curve.costly : false;
-}
-
-function interleaved(a: Float64Array, b: Float64Array): Float64Array {
-  const both = new Float64Array(2 * a.length);
-  for (let k = 0; k < a.length; k += 2) {
-    both[2 * k] = a[k];
-    both[2 * k + 1] = a[k + 1];
-    both[2 * k + 2] = b[k];
-    both[2 * k + 3] = b[k + 1];
-  }
-  return both;
 }

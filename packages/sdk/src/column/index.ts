@@ -19,7 +19,7 @@ export { makeCheckpoint } from './checkpoint.js';
  * Solves the age-ranked storage balance ∂S_T/∂t + ∂S_T/∂T = J − Σ F_f Ω_f(S_T, t), S_T(0, t) = 0, through a forcing, with the
  * tracers that ride on it.
  *
- * In the default mode (`ageResolution` 0.05) parcels older than twenty steps merge once their joint width is 5 % of their age; what
+ * In the default mode (`ageResolution` 0.1) parcels older than ten steps merge once their joint width is a tenth of their age; what
  * that costs is in the accuracy table of the README. `ageResolution: 0` keeps every age and carries every boundary to 1e-9.
  *
  * @param catchment mm, and parameters as the forms state them

@@ -10,29 +10,28 @@ export class InflowClock {
   times: number[] = [];
   /** mm entered by then, not decreasing. */
   amounts: number[] = [];
+  /** Where the last answer of `amountAt` lay. */
+  place = 0;
 
   add(start: number, end: number, before: number, after: number): void {
     if (this.times.length === 0 || this.times[this.times.length - 1] < start) this.push(start, before);
     this.push(end, after);
   }
 
-  /** mm that had entered by `time`; linear between what is kept. */
-  amountAt(time: number): number {
+  /**
+   * mm that had entered by `time`; linear between what is kept.
+   * @param near  a place from which to look, such as where the last step's answer lay
+   */
+  amountAt(time: number, near: number): number {
     const { times, amounts } = this;
-    const k = lastAtOrBelow(times, time);
-    if (k < 0) return amounts.length > 0 ? amounts[0] : 0;
-    if (k === times.length - 1) return amounts[k];
-    return amounts[k] + ((time - times[k]) / (times[k + 1] - times[k])) * (amounts[k + 1] - amounts[k]);
+    const k = (this.place = walkedTo(times, time, near));
+    return k < 0 && times.length === 0 ? 0 : between(times, amounts, k, time);
   }
 
   /** The time by which `amount` mm had entered. */
   timeAt(amount: number): number {
     const { times, amounts } = this;
-    const k = lastAtOrBelow(amounts, amount);
-    if (k < 0) return times[0];
-    if (k === times.length - 1) return times[k];
-    const rise = amounts[k + 1] - amounts[k];
-    return times[k] + ((amount - amounts[k]) / rise) * (times[k + 1] - times[k]);
+    return between(amounts, times, lastAtOrBelow(amounts, amount), amount);
   }
 
   thin(): void {
@@ -58,6 +57,20 @@ export class InflowClock {
     this.times.push(time);
     this.amounts.push(amount);
   }
+}
+
+/** y at x, where x lies between places k and k + 1 of a list; held beyond its ends. */
+function between(xs: readonly number[], ys: readonly number[], k: number, x: number): number {
+  if (k < 0) return ys[0];
+  return k === xs.length - 1 ? ys[k] : ys[k] + ((x - xs[k]) / (xs[k + 1] - xs[k])) * (ys[k + 1] - ys[k]);
+}
+
+/** As `lastAtOrBelow`, one entry after the other from `near`. */
+function walkedTo(list: readonly number[], value: number, near: number): number {
+  let k = Math.min(near, list.length - 1);
+  while (k >= 0 && list[k] > value) k--;
+  while (k + 1 < list.length && list[k + 1] <= value) k++;
+  return k;
 }
 
 /** Index of the last entry ≤ value in a list that does not decrease; −1 if all are above. */

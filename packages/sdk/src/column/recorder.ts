@@ -2,7 +2,7 @@ import type { AgeDistribution, ColumnRun, ColumnSnapshot, FollowedInflow, Outflo
 import type { SelectionEvaluator } from '../selection/index.js';
 import type { ColumnState } from './columnState.js';
 import type { InflowClock } from './inflowClock.js';
-import { firstYoungerThan, takenAfter, timeOfAmount } from './observe.js';
+import { firstYoungerThan, shareAfter, timeOfAmount, timeOfShare } from './observe.js';
 
 export const BEYOND_RECORD = 1;
 export const ON_ASSUMED_WATER = 2;
@@ -18,7 +18,11 @@ export class Recorder {
   private readonly quantiles: readonly number[];
   private readonly distributionsAt: ReadonlySet<number>;
   private readonly snapshotsAt: ReadonlySet<number>;
+  /** By age: the first parcel wholly younger, and the share of the one before it that is. */
   private readonly firsts: Int32Array;
+  private readonly partial: Float64Array;
+  /** By age: where in the clock it lay. */
+  private readonly places: Int32Array;
   private readonly byOutflow: OutflowAges[];
   private readonly shareSeries: Float64Array[][];
   private readonly quantileSeries: { days: Float64Array; beyondRecord: Uint8Array }[][];
@@ -39,6 +43,8 @@ export class Recorder {
     this.snapshotsAt = new Set(options.snapshotsAt ?? []);
     this.follows = [...new Set(options.followInflowOf ?? [])];
     this.firsts = new Int32Array(this.ages.length);
+    this.partial = new Float64Array(this.ages.length);
+    this.places = new Int32Array(this.ages.length);
     this.share = new Float64Array(names.length);
     for (const name of names) {
       const concentration = Object.create(null) as Record<string, Float64Array>;
@@ -78,7 +84,12 @@ export class Recorder {
   record(k: number, now: number, state: ColumnState, clock: InflowClock | null, flux: Float64Array, preTaken: Float64Array): void {
     this.storage[k] = state.total;
     const { ages, quantiles, stepDays } = this;
-    for (let a = 0; a < ages.length; a++) this.firsts[a] = firstYoungerThan(state, now - ages[a] / stepDays);
+    for (let a = 0; a < ages.length; a++) {
+      const time = now - ages[a] / stepDays;
+      const first = (this.firsts[a] = firstYoungerThan(state, time, this.firsts[a]));
+      this.partial[a] = first > 0 ? shareAfter(state, clock, first - 1, time, this.places[a]) : 0;
+      if (clock !== null) this.places[a] = clock.place;
+    }
     for (let f = 0; f < this.byOutflow.length; f++) {
       const out = this.byOutflow[f];
       const amount = flux[f] * stepDays;
@@ -93,7 +104,10 @@ export class Recorder {
         out.assumedShare[k] = (state.cumulative[f][0] - newer) / amount;
       }
       for (let a = 0; a < ages.length; a++) {
-        this.shareSeries[f][a][k] = takenAfter(state, clock, f, now - ages[a] / stepDays, this.firsts[a]) / amount;
+        const first = this.firsts[a];
+        const whole = first < state.count ? state.cumulative[f][first] : 0;
+        const cut = this.partial[a] > 0 ? this.partial[a] * state.takenFrom(f, first - 1) : 0;
+        this.shareSeries[f][a][k] = (whole + cut) / amount;
       }
       for (let q = 0; q < quantiles.length; q++) {
         const series = this.quantileSeries[f][q];
@@ -102,7 +116,7 @@ export class Recorder {
         series.days[k] = (beyond ? now : now - time) * stepDays;
         series.beyondRecord[k] = beyond ? BEYOND_RECORD : time < 0 ? ON_ASSUMED_WATER : 0;
       }
-      if (this.distributionsAt.has(k)) out.distributions.set(k, distributionOf(state, f, now, stepDays, amount));
+      if (this.distributionsAt.has(k)) out.distributions.set(k, distributionOf(state, clock, f, now, stepDays, amount));
     }
   }
 
@@ -175,7 +189,14 @@ export class Recorder {
 }
 
 /** Cumulative shares at both edges of every parcel, youngest first; flat over ages at which nothing fell. */
-function distributionOf(state: ColumnState, f: number, now: number, stepDays: number, amount: number): AgeDistribution {
+function distributionOf(
+  state: ColumnState,
+  clock: InflowClock | null,
+  f: number,
+  now: number,
+  stepDays: number,
+  amount: number,
+): AgeDistribution {
   const age: number[] = [];
   const share: number[] = [];
   let reached = 0;
@@ -185,7 +206,13 @@ function distributionOf(state: ColumnState, f: number, now: number, stepDays: nu
       age.push(younger);
       share.push(reached);
     }
+    const above = reached;
     reached = state.cumulative[f][i] / amount;
+    // how what is left lies within a merged parcel
+    for (let q = 3; clock !== null && q > 0 && !state.curves.isOne(i); q--) {
+      age.push((now - timeOfShare(state, clock, i, 1 - q / 4)) * stepDays);
+      share.push(above + (1 - q / 4) * (reached - above));
+    }
     age.push((now - state.entryStart[i]) * stepDays);
     share.push(reached);
   }

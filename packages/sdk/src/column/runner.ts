@@ -8,7 +8,7 @@ import { Recorder } from './recorder.js';
 import { moveTracer, TracerLedger } from './tracerPass.js';
 import { parseInstant } from './validate.js';
 
-export const DEFAULT_AGE_RESOLUTION = 0.05;
+export const DEFAULT_AGE_RESOLUTION = 0.1;
 /** Steps between passes that merge parcels and thin the clock; counted from the record's start, so that it never depends on who runs it. */
 const MERGE_EVERY = 8;
 const THIN_EVERY = 64;

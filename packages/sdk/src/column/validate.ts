@@ -13,6 +13,10 @@ export function parseInstant(text: unknown): number {
   return typeof text === 'string' && ISO_INSTANT.test(text) ? Date.parse(text) : NaN;
 }
 
+function note(issues: Issue[], code: string, path: string, expected: string, received: unknown): void {
+  issues.push({ code, path, expected, received: shorten(received ?? 'nothing') });
+}
+
 /** Problems of a forcing by itself: start, step, lengths, fluxes. At most a hundred. */
 export function describeForcing(forcing: Forcing): Issue[] {
   const issues: Issue[] = [];
@@ -20,23 +24,13 @@ export function describeForcing(forcing: Forcing): Issue[] {
     return [{ code: 'forcing-type', path: 'forcing', expected: 'a forcing', received: shorten(forcing) }];
   }
   if (Number.isNaN(parseInstant(forcing.start))) {
-    issues.push({
-      code: 'forcing-start',
-      path: 'start',
-      expected: 'an ISO 8601 instant with its zone, like 2015-10-01T00:00:00Z',
-      received: shorten(forcing.start ?? 'nothing'),
-    });
+    note(issues, 'forcing-start', 'start', 'an ISO 8601 instant with its zone, like 2015-10-01T00:00:00Z', forcing.start);
   }
   if (!(Number.isFinite(forcing.stepDays) && forcing.stepDays > 0)) {
-    issues.push({
-      code: 'forcing-step',
-      path: 'stepDays',
-      expected: 'a finite number of days above 0',
-      received: shorten(forcing.stepDays),
-    });
+    note(issues, 'forcing-step', 'stepDays', 'a finite number of days above 0', forcing.stepDays);
   }
   const steps = isNumberList(forcing.inflow) ? forcing.inflow.length : -1;
-  if (steps === 0) issues.push({ code: 'forcing-empty', path: 'inflow', expected: 'at least one step', received: 'none' });
+  if (steps === 0) note(issues, 'forcing-empty', 'inflow', 'at least one step', 'none');
   describeFlux(forcing.inflow, 'inflow', steps, 'outflow', issues);
   const groups = [
     ['outflows', forcing.outflows],
@@ -45,7 +39,7 @@ export function describeForcing(forcing: Forcing): Issue[] {
   ] as const;
   for (const [group, series] of groups) {
     if (typeof series !== 'object' || series === null) {
-      issues.push({ code: 'forcing-type', path: group, expected: 'series by name', received: shorten(series ?? 'nothing') });
+      note(issues, 'forcing-type', group, 'series by name', series);
       continue;
     }
     for (const name of Object.keys(series)) {
@@ -70,7 +64,7 @@ function describeLength(list: unknown, path: string, steps: number, issues: Issu
     return false;
   }
   if (steps >= 0 && list.length !== steps) {
-    issues.push({ code: 'length', path, expected: `${steps} values, as many as inflow has`, received: String(list.length) });
+    note(issues, 'length', path, `${steps} values, as many as inflow has`, list.length);
     return false;
   }
   return true;
@@ -95,24 +89,14 @@ export function describeCatchment(catchment: Catchment): Issue[] {
   }
   describeFields(catchment, CATCHMENT_FIELDS, '', issues);
   if (!(Number.isFinite(catchment.initialStorage) && catchment.initialStorage > 0)) {
-    issues.push({
-      code: 'initial-storage',
-      path: 'initialStorage',
-      expected: 'a finite number of mm above 0',
-      received: shorten(catchment.initialStorage),
-    });
+    note(issues, 'initial-storage', 'initialStorage', 'a finite number of mm above 0', catchment.initialStorage);
   }
   if (typeof catchment.selection !== 'object' || catchment.selection === null || Object.keys(catchment.selection).length === 0) {
-    issues.push({
-      code: 'selection-missing',
-      path: 'selection',
-      expected: 'one selection for each outflow',
-      received: shorten(catchment.selection ?? 'nothing'),
-    });
+    note(issues, 'selection-missing', 'selection', 'one selection for each outflow', catchment.selection);
   }
   const range = catchment.wetnessRange;
   if (range !== undefined && !(Array.isArray(range) && range.length === 2 && range.every(Number.isFinite) && range[0] < range[1])) {
-    issues.push({ code: 'wetness-range', path: 'wetnessRange', expected: '[low, high] in mm, low below high', received: shorten(range) });
+    note(issues, 'wetness-range', 'wetnessRange', '[low, high] in mm, low below high', range);
   }
   for (const [name, rule] of Object.entries(catchment.tracers ?? {})) describeTracer(rule, `tracers.${name}`, catchment, issues);
   return issues;
@@ -121,23 +105,18 @@ export function describeCatchment(catchment: Catchment): Issue[] {
 function describeFields(data: object, known: readonly string[], path: string, issues: Issue[]): void {
   for (const key of Object.keys(data)) {
     if (known.includes(key)) continue;
-    issues.push({
-      code: 'unknown-field',
-      path: path ? `${path}.${key}` : key,
-      expected: `one of ${known.join(', ')}`,
-      received: shorten(key),
-    });
+    note(issues, 'unknown-field', path ? `${path}.${key}` : key, `one of ${known.join(', ')}`, key);
   }
 }
 
 function describeTracer(rule: TracerRule, path: string, catchment: Catchment, issues: Issue[]): void {
   if (typeof rule !== 'object' || rule === null) {
-    issues.push({ code: 'tracer-rule', path, expected: 'a tracer rule', received: shorten(rule) });
+    note(issues, 'tracer-rule', path, 'a tracer rule', rule);
     return;
   }
   describeFields(rule, TRACER_FIELDS, path, issues);
   const need = (good: boolean, field: string, expected: string, received: unknown): void => {
-    if (!good) issues.push({ code: 'tracer-rule', path: `${path}.${field}`, expected, received: shorten(received ?? 'nothing') });
+    if (!good) note(issues, 'tracer-rule', `${path}.${field}`, expected, received);
   };
   const rate = (value: unknown): boolean => typeof value === 'number' && Number.isFinite(value) && value >= 0;
   need(Number.isFinite(rule.preRecord), 'preRecord', 'a finite concentration', rule.preRecord);
@@ -178,7 +157,7 @@ function describeInput(forcing: Forcing, name: string, issues: Issue[]): void {
   const path = `inflowConcentration.${name}`;
   const series = Object.hasOwn(forcing.inflowConcentration, name) ? forcing.inflowConcentration[name] : undefined;
   if (series === undefined) {
-    issues.push({ code: 'concentration-missing', path, expected: 'a series for each tracer of the catchment', received: 'none' });
+    note(issues, 'concentration-missing', path, 'a series for each tracer of the catchment', 'none');
     return;
   }
   for (let k = 0; k < series.length && issues.length < MOST_ISSUES; k++) {
@@ -223,12 +202,10 @@ export function describeOptions(options: RunOptions, steps: number): Issue[] {
   ): void => {
     const list: unknown = options[key];
     if (list === undefined) return;
-    if (!Array.isArray(list))
-      issues.push({ code: 'option', path: `options.${key}`, expected: `a list of ${words}`, received: shorten(list) });
+    if (!Array.isArray(list)) note(issues, 'option', `options.${key}`, `a list of ${words}`, list);
     else
       list.forEach((value, index) => {
-        if (typeof value !== 'number' || !good(value))
-          issues.push({ code: 'option', path: `options.${key}[${index}]`, expected: words, received: shorten(value) });
+        if (typeof value !== 'number' || !good(value)) note(issues, 'option', `options.${key}[${index}]`, words, value);
       });
   };
   const isStep = (value: number): boolean => Number.isInteger(value) && value >= 0 && value < steps;
@@ -237,15 +214,10 @@ export function describeOptions(options: RunOptions, steps: number): Issue[] {
   for (const key of ['distributionsAt', 'snapshotsAt', 'followInflowOf'] as const) each(key, isStep, `step indices from 0 to ${steps - 1}`);
   const resolution = options.ageResolution;
   if (resolution !== undefined && !(resolution >= 0 && resolution <= 0.5))
-    issues.push({ code: 'option', path: 'options.ageResolution', expected: 'a number from 0 to 0.5', received: shorten(resolution) });
+    note(issues, 'option', 'options.ageResolution', 'a number from 0 to 0.5', resolution);
   const repeats = options.spinUp?.repeats;
   if (options.spinUp !== undefined && !(Number.isInteger(repeats) && Number(repeats) >= 0 && Number(repeats) <= 1000))
-    issues.push({
-      code: 'option',
-      path: 'options.spinUp.repeats',
-      expected: 'a whole number from 0 to 1000',
-      received: shorten(repeats ?? 'nothing'),
-    });
+    note(issues, 'option', 'options.spinUp.repeats', 'a whole number from 0 to 1000', repeats);
   return issues;
 }
 

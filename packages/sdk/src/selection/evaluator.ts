@@ -4,7 +4,6 @@ import { AmountTable, drivenValue, inDomain, type DrivenSlot } from './amount.js
 import type { Curve, Piece } from './curve.js';
 import { CurveTable } from './curveTable.js';
 import { compileForm } from './forms.js';
-import { JointTable } from './jointTable.js';
 
 const WEIGHT_TOLERANCE = 1e-9;
 
@@ -35,7 +34,6 @@ export class SelectionEvaluator {
   readonly steady: boolean;
   /** Names of the drivers in use. */
   readonly drivers: readonly string[];
-  private readonly joint: JointTable | null;
   private readonly amounts: AmountTable;
   private readonly mixtures: { outflow: number; name: string }[];
 
@@ -58,7 +56,6 @@ export class SelectionEvaluator {
       .filter((_entry, index) => compiled[index].some((one) => one.weights.length > 0));
     if (this.steady) this.setNumbers(0);
     else this.fillNumbers();
-    this.joint = this.steady && !exact ? JointTable.for(this.pieces, names.length) : null;
   }
 
   /** Sets every driven parameter for one step. @throws RillageError `parameter-domain` or `mixture-weights`, naming the step */
@@ -81,11 +78,6 @@ export class SelectionEvaluator {
    * @param out [outflows] shares 0..1
    */
   evaluate(depth: number, total: number, out: Float64Array): void {
-    const { joint } = this;
-    if (joint !== null && depth > joint.shallowest && depth < joint.deepest) {
-      joint.evaluate(depth, total, out);
-      return;
-    }
     for (let f = 0; f < out.length; f++) out[f] = this.youngest[f];
     if (depth <= 0) return;
     for (const active of this.pieces) {
