@@ -27,6 +27,7 @@ export { makeSection, sectionSteps, type Section, type SectionColumn, type Secti
 
 export { fitCatchment, type FitCatchmentOptions } from './workers/fitCatchment.js';
 export { whatWouldHelp, type HelpOptions } from './workers/whatWouldHelp.js';
+export { runDrawsInBackground, type DrawsOptions } from './workers/runDrawsInBackground.js';
 export type { Help } from './fit/whatWouldHelp.js';
 export { catchmentsOf, fitMembers, runDraws, type FitMember } from './fit/draws.js';
 export type { AlternativeAges, Fit, FitState, FittedAlternative, Predictive, Quantiles } from './fit/fit.js';

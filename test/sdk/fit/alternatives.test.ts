@@ -9,6 +9,7 @@ import {
   READING_RUN_OPTIONS,
   RillageError,
   runDraws,
+  runDrawsInBackground,
   updateStation,
   whatWouldHelp,
   type Fit,
@@ -171,6 +172,18 @@ describe('fitCatchment over two selections and two fillings', () => {
     const there = await fitCatchment(problem, { ...quick, workers: 2, ...(existsSync(entry) ? { worker: entry.href } : {}) });
     expect(there.alternatives.map(({ draws }) => draws)).toEqual(fit.alternatives.map(({ draws }) => draws));
   }, 180_000);
+
+  test('runDrawsInBackground gives the runs of runDraws, and ends at a signal', async () => {
+    const options = { youngerThan: [30] };
+    const shares = (runs: { run: { outflows: Record<string, { youngerShare: Map<number, Float64Array> }> } }[]): number[][] =>
+      runs.map(({ run }) => [...run.outflows['discharge'].youngerShare.get(30)!.slice(-3)]);
+    const there: number[] = [];
+    const runs = await runDrawsInBackground(fit, problem, options, { count: 12, onProgress: ({ done }) => there.push(done) });
+    expect(shares(runs)).toEqual(shares(runDraws(fit, problem, options, 12)));
+    expect(there.at(-1)).toBe(1);
+    const signal = AbortSignal.abort();
+    await expect(runDrawsInBackground(fit, problem, options, { signal })).rejects.toMatchObject({ code: 'aborted' });
+  });
 
   test('fitMembers refuses a fit of another problem', async () => {
     expect(await codeOf(() => fitMembers(fit, single))).toBe('fit-mismatch');

@@ -4,7 +4,7 @@ import type { Prior } from '../../../packages/sdk/src/fit/priors.js';
 import { keptDraws, runSampler } from '../../../packages/sdk/src/fit/sampler/run.js';
 import { openSampler } from '../../../packages/sdk/src/fit/sampler/sampler.js';
 import { Random } from '../../../packages/sdk/src/numeric/random.js';
-import { rankOf } from '../../calibration.js';
+import { rankOf } from '../../calibration/ranks.mjs';
 
 /** Level, slope and error size of a line. */
 const PRIORS: Prior[] = [

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { Random } from '../../../packages/sdk/src/numeric/random.js';
-import { chiSquareUniform, kolmogorovCdf, kolmogorovSmirnov, rankCounts, rankOf } from '../../calibration.js';
+import { chiSquareUniform, kolmogorovCdf, kolmogorovSmirnov, rankCounts, rankOf } from '../../calibration/ranks.mjs';
 import checks from '../../checks/metrics.json';
 import { calibrateLine } from './calibrateLine.js';
 

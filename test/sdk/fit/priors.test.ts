@@ -12,7 +12,7 @@ import {
 } from '../../../packages/sdk/src/fit/priorMath.js';
 import { type Prior, checkPrior, isPrior } from '../../../packages/sdk/src/fit/priors.js';
 import { Random } from '../../../packages/sdk/src/numeric/random.js';
-import { kolmogorovSmirnov } from '../../calibration.js';
+import { kolmogorovSmirnov } from '../../calibration/ranks.mjs';
 import checks from '../../checks/fitValues.json';
 
 const cases = checks.priors.map(({ prior, rows }) => ({ prior: prior as Prior, rows, name: JSON.stringify(prior) }));
