@@ -1,6 +1,7 @@
 import { existsSync } from 'node:fs';
 import resolve from '@rollup/plugin-node-resolve';
 import terser from '@rollup/plugin-terser';
+import { languageFile, laterLanguages } from './demo-site/tools/rollup/later-languages.mjs';
 import { lateUplot } from './demo-site/tools/rollup/late-uplot.mjs';
 import { ownPolicy } from './demo-site/tools/rollup/own-policy.mjs';
 import { at, filesUnder } from './demo-site/tools/paths.mjs';
@@ -9,7 +10,7 @@ import { lines } from './demo-site/tools/rollup/lines.mjs';
 const banner = '/*! Rillage, MIT. What it contains of others: third-party-licences.txt in the same folder. */';
 
 /**
- * Every single-file build that ships. The unbundled modules come from tsc; see demo-site/build.mjs, which runs both. A function, since an
+ * Every single-file build that ships, with the words of other languages beside them. The unbundled modules come from tsc; see demo-site/build.mjs, which runs both. A function, since an
  * entry of elements is made of what tsc has written. A page loads one file of elements: a second would ask for the same policy name.
  */
 export function bundles() {
@@ -22,8 +23,16 @@ export function bundles() {
       'rillage-reading',
       every.filter((path) => /rillage-(station|reading)[\\/]/.test(path)),
     ),
+    ...languages.map((language) => ({
+      name: `words of ${language}`,
+      input: at(`packages/elements/dist/languages/${language}.js`),
+      file: at(`packages/elements/dist/${languageFile(language)}`),
+    })),
   ].filter((bundle) => (bundle.needs ?? [bundle.input]).every((path) => existsSync(path)));
 }
+
+/** Languages that ship beside English. */
+const languages = ['ar', 'de'];
 
 /** One file that defines some elements. @param defining  absolute paths of built define.js files */
 export function elementBundle(name, defining, more = '', folder = at('packages/elements/dist')) {
@@ -43,6 +52,7 @@ export function optionsFor({ input, from, code, file }) {
     input: input ?? from,
     plugins: [
       code ? lines(from, code) : null,
+      code ? laterLanguages() : null,
       ownPolicy(),
       lateUplot(),
       resolve({ browser: true, exportConditions: ['browser', 'production'] }),

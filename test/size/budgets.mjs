@@ -20,21 +20,20 @@ export function budgets() {
     {
       name: 'reading alone',
       limitKb: 12,
-      later: [languages, fullForm],
+      later: [fullForm],
       bundle: elementBundle('rillage-reading', of('rillage-reading')),
       without: [/uplot/, engine, outside('sdk', 'elements', 'lit')],
     },
     {
       name: 'station and reading',
       limitKb: 16,
-      later: [languages, fullForm],
+      later: [fullForm],
       bundle: elementBundle('rillage-reading', of('rillage-station', 'rillage-reading')),
       without: [/uplot/, engine, outside('sdk', 'elements', 'lit', 'idb-keyval')],
     },
     {
       name: 'one plot',
       limitKb: 36,
-      later: [languages],
       bundle: elementBundle('rillage-age-plot', of('rillage-age-plot')),
       without: [engine, outside('sdk', 'elements', 'lit', 'uplot')],
     },
@@ -68,9 +67,6 @@ function core() {
     file: at('.cache/core.min.js'),
   };
 }
-
-/** Messages of the languages other than English. */
-const languages = /elements[\\/]dist[\\/]languages[\\/]/;
 
 /** What the reading fetches for its full form, and for sentences in another language than the file's. */
 const fullForm = /elements[\\/]dist[\\/]rillage-reading[\\/](compose|compose-messages|details|numbers|evidence|strip)\.js/;

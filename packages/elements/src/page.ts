@@ -1,4 +1,12 @@
-import { RillageAgeHistory, RillageAgePlot, RillageColumnView, RillageExplorer, RillageReading, RillageStation } from './classes.js';
+import {
+  RillageAgeHistory,
+  RillageAgePlot,
+  RillageColumnView,
+  RillageExplorer,
+  RillageFitPanel,
+  RillageReading,
+  RillageStation,
+} from './classes.js';
 import { define, defineWithPrefix } from './shared/define.js';
 import { everySpeakerReads } from './shared/language.js';
 import { putMessages, type Messages } from './shared/messages.js';
@@ -27,6 +35,7 @@ const elements = {
   'age-plot': RillageAgePlot,
   'column-view': RillageColumnView,
   explorer: RillageExplorer,
+  'fit-panel': RillageFitPanel,
   reading: RillageReading,
   station: RillageStation,
 };

@@ -1,4 +1,5 @@
 import type { Messages } from '../shared/messages.js';
+import { fit } from './ar-fit.js';
 import { throughTime } from './ar-through-time.js';
 
 /** Arabic, written from right to left. */
@@ -149,5 +150,6 @@ export const messages: Messages = {
   'station.notStation': 'الملف ليس ملف محطة ({at}).',
   'station.newer': 'الملف من إصدار أحدث ({at}) مما تفهمه هذه الصفحة (1).',
 
+  ...fit,
   ...throughTime,
 };

@@ -1,4 +1,5 @@
 import type { Messages } from '../shared/messages.js';
+import { fit } from './de-fit.js';
 import { throughTime } from './de-through-time.js';
 
 /** German. */
@@ -154,5 +155,6 @@ export const messages: Messages = {
   'station.notStation': 'Die Datei ist keine Stationsdatei ({at}).',
   'station.newer': 'Die Datei ist von neuerer Fassung ({at}), als diese Seite versteht (1).',
 
+  ...fit,
   ...throughTime,
 };

@@ -1,0 +1,4 @@
+import { define } from '../shared/define.js';
+import { RillageFitPanel } from './rillage-fit-panel.js';
+
+define('rillage-fit-panel', RillageFitPanel);
