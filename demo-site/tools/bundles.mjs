@@ -6,7 +6,13 @@ import { onChange } from './stamp.mjs';
 /** Makes every single-file build whose inputs have changed. */
 export async function buildBundles() {
   const modules = ['sdk', 'elements'].flatMap((name) => filesUnder(at(`packages/${name}/dist`)).filter((path) => isModule(path)));
-  const tools = [at('rollup.config.mjs'), at('package-lock.json'), ...filesUnder(at('demo-site/tools/rollup'))];
+  const tools = [
+    at('rollup.config.mjs'),
+    at('package-lock.json'),
+    at('packages/sdk/package.json'),
+    at('packages/elements/package.json'),
+    ...filesUnder(at('demo-site/tools/rollup')),
+  ];
   const present = bundles();
   return onChange({
     name: 'bundles',

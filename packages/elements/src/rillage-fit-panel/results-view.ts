@@ -42,9 +42,11 @@ function findings({ findings }: Fit, name: string): TemplateResult | typeof noth
   if (findings.length === 0) return nothing;
   return html`<h3>${name}</h3>
     <ul>
-      ${findings.map(({ code, seen, done, settle }) => html`<li>${cleanText([seen, done, settle].filter(Boolean).join(' ') || code, 500)}</li>`)}
+      ${findings.map(({ code, seen, done, settle }) => html`<li>${cleanText([seen, done, settle].filter(Boolean).map(asSentence).join(' ') || code, 500)}</li>`)}
     </ul>`;
 }
+
+const asSentence = (words = ''): string => (/[.!?]$/.test(words) ? words : `${words}.`);
 
 function parameters({ fit, language }: ResultsProps, digits: Words): TemplateResult | typeof nothing {
   const say = language.say.bind(language);
@@ -112,7 +114,7 @@ function samples(
   const year = (time: number): string => date(language.tag, time, { year: 'numeric' });
   const open = tableOf === tracer;
   return html`<figure part="picture">
-      ${scatter(residuals, words, digits, year)}
+      <div class="wide" tabindex="0" role="group" aria-label=${name}>${scatter(residuals, words, digits, year)}</div>
       <figcaption>${words}</figcaption>
     </figure>
     <p class="actions">

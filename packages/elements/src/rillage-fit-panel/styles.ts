@@ -121,6 +121,9 @@ export const fitPanelStyles = css`
   .wide {
     overflow-x: auto;
   }
+  .wide > * {
+    min-inline-size: 36rem;
+  }
   .strip {
     display: block;
     direction: ltr;

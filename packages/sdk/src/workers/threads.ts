@@ -27,7 +27,7 @@ export async function openThread(source: WorkerSource): Promise<Thread | null> {
 }
 
 function webThread(source: WorkerSource): Thread {
-  const worker = typeof source === 'function' ? source() : new Worker(source ?? ownAddress(), { type: 'module' });
+  const worker = typeof source === 'function' ? source() : new Worker(trusted(source ?? ownAddress()), { type: 'module' });
   const thread: Thread = {
     post: (request) => worker.postMessage(request),
     onReply: () => undefined,
@@ -56,6 +56,26 @@ async function nodeThread(source: WorkerSource): Promise<Thread | null> {
   worker.on('message', (reply: Reply) => thread.onReply(reply));
   worker.on('error', (error) => thread.onFailure(error));
   return thread;
+}
+
+interface ScriptPolicy {
+  createScriptURL(address: string): string;
+}
+let policy: ScriptPolicy | undefined;
+
+/**
+ * The address in the form that a page which requires trusted types takes, where its header names this policy; where it does not, the
+ * worker is refused and the work is done in slices. Only addresses that the caller or this package gave pass through it.
+ */
+function trusted(address: string | URL): string | URL {
+  const { trustedTypes } = globalThis as { trustedTypes?: { createPolicy(name: string, rules: ScriptPolicy): ScriptPolicy } };
+  if (trustedTypes === undefined) return address;
+  try {
+    policy ??= trustedTypes.createPolicy('rillage-worker', { createScriptURL: (given) => given });
+  } catch {
+    return address;
+  }
+  return policy.createScriptURL(String(address));
 }
 
 function ownAddress(): URL {
