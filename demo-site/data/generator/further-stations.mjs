@@ -7,10 +7,11 @@ import { STATIONS } from './stations.mjs';
 const brook = STATIONS['thessle-brook'];
 
 export const FURTHER_STATIONS = [
-  /** Clay that sheds a storm within days: young water, and a flow that jumps. */
+  /** Young water, and a flow that jumps. */
   station({
     id: 'ottering-beck',
     name: 'Ottering Beck at Clayfold',
+    ground: 'Clay, which sheds a storm within days.',
     seed: 20190402,
     firstDay: '2019-04-01',
     areaKm2: 8.7,
@@ -23,10 +24,11 @@ export const FURTHER_STATIONS = [
       },
     },
   }),
-  /** A spring out of thick chalk: a flow that hardly moves, and most of its water older than the record. */
+  /** A flow that hardly moves, and most of its water older than the record. */
   station({
     id: 'ambrel-spring',
     name: 'Ambrel Spring at Ashendown',
+    ground: 'Thick chalk, out of which the water comes late.',
     seed: 20190403,
     firstDay: '2019-04-01',
     areaKm2: 31,
@@ -39,10 +41,11 @@ export const FURTHER_STATIONS = [
       },
     },
   }),
-  /** A moorland trickle on fissured rock that stops in dry weather. */
+  /** Dry on the record's last day. */
   station({
     id: 'tessen-sike',
     name: 'Tessen Sike at Low Hummock',
+    ground: 'Moor on fissured rock; the stream stops in dry weather.',
     seed: 20190514,
     firstDay: '2019-04-01',
     areaKm2: 0.9,
