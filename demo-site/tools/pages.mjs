@@ -1,16 +1,19 @@
 import { mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { basename } from 'node:path';
 import { streams } from '../pages/stations.mjs';
+import { embedValues } from './embed-page.mjs';
+import { escaped } from './escaped.mjs';
 import { at, filesUnder } from './paths.mjs';
 
 /** Fills in the pages of demo-site/pages/ and writes them where the site is served from. */
 export function writePages() {
   const folder = at('demo-site/public/stations');
   mkdirSync(folder, { recursive: true });
-  const template = readFileSync(at('demo-site/pages/station.html'), 'utf8');
-  for (const stream of streams) writeFileSync(`${folder}/${stream.id}.html`, fill(template, { ...stream, ...wordsOf(stream) }));
+  const template = (name) => readFileSync(at(`demo-site/pages/${name}.html`), 'utf8');
+  for (const stream of streams) writeFileSync(`${folder}/${stream.id}.html`, fill(template('station'), { ...stream, ...wordsOf(stream) }));
   const wanted = new Set(streams.map(({ id }) => `${id}.html`));
   for (const path of filesUnder(folder)) if (!wanted.has(basename(path))) rmSync(path);
+  writeFileSync(at('demo-site/public/embed.html'), fill(template('embed'), embedValues()));
 }
 
 /** The text with its holes filled. @throws Error where a hole has no value */
@@ -21,8 +24,6 @@ export function fill(template, values) {
   };
   return template.replace(/\{\{\{(\w+)\}\}\}|\{\{(\w+)\}\}/g, (_, raw, name) => (raw ? valueOf(raw) : escaped(valueOf(name))));
 }
-
-export const escaped = (text) => text.replace(/[&<>"]/g, (mark) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;' })[mark]);
 
 /** Bottles are taken, and the column has a page, at Thessle Brook alone. */
 function wordsOf({ id }) {

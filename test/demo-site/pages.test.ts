@@ -35,7 +35,7 @@ describe('the portal’s list', () => {
 });
 
 describe('the pages', () => {
-  it.each(['public/index.html', 'public/column.html', 'pages/station.html'])('%s has no inline script or style', (path) => {
+  it.each(['public/index.html', 'public/column.html', 'pages/station.html', 'pages/embed.html'])('%s has no inline script or style', (path) => {
     const text = page(path);
     expect(text).not.toMatch(/<style|\sstyle=|\son\w+=/i);
     for (const [tag] of text.matchAll(/<script[^>]*>/g)) expect(tag).toMatch(/ src="/);
