@@ -35,9 +35,12 @@ describe('the portal’s list', () => {
 });
 
 describe('the pages', () => {
-  it.each(['public/index.html', 'public/column.html', 'pages/station.html', 'pages/embed.html'])('%s has no inline script or style', (path) => {
-    const text = page(path);
-    expect(text).not.toMatch(/<style|\sstyle=|\son\w+=/i);
-    for (const [tag] of text.matchAll(/<script[^>]*>/g)) expect(tag).toMatch(/ src="/);
-  });
+  it.each(['public/index.html', 'public/column.html', 'pages/station.html', 'pages/embed.html'])(
+    '%s has no inline script or style',
+    (path) => {
+      const text = page(path);
+      expect(text).not.toMatch(/<style|\sstyle=|\son\w+=/i);
+      for (const [tag] of text.matchAll(/<script[^>]*>/g)) expect(tag).toMatch(/ src="/);
+    },
+  );
 });
