@@ -10,6 +10,7 @@ import { publishLibrary } from './tools/library.mjs';
 import { alone } from './tools/lock.mjs';
 import { buildManifest } from './tools/manifest.mjs';
 import { buildModules } from './tools/modules.mjs';
+import { writePages } from './tools/pages.mjs';
 import { at, filesUnder } from './tools/paths.mjs';
 
 /** @returns true where every step succeeded; what failed is printed. */
@@ -50,6 +51,7 @@ const steps = [
   ['single-file builds', buildBundles],
   ['licences', once(writeLicences)],
   ['site library', once(publishLibrary)],
+  ['site pages', once(writePages)],
 ];
 
 /** A step too cheap to be worth a stamp. */

@@ -1,4 +1,4 @@
-/** The morning job in Deno: `deno run --allow-read=FOLDER --allow-write=FOLDER demo-site/service/deno.mjs STATION.json ROWS.csv READING.json`. */
+/** The morning job in Deno: `deno run --allow-read=FOLDER --allow-write=FOLDER demo-site/service/deno.mjs STATION.json ROWS.csv READING.json [EXCERPT.json]`. */
 import { morningCommand } from './morning.mjs';
 
 export const denoFiles = {

@@ -1,4 +1,4 @@
-/** The morning job in Node: `node demo-site/service/node.mjs STATION.json ROWS.csv READING.json`. */
+/** The morning job in Node: `node demo-site/service/node.mjs STATION.json ROWS.csv READING.json [EXCERPT.json]`. */
 import { open, readFile, rename } from 'node:fs/promises';
 import { dirname } from 'node:path';
 import { pathToFileURL } from 'node:url';

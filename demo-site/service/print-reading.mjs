@@ -1,15 +1,22 @@
-/** Today's reading of the invented catchment in the terminal: makes the station from its CSV files, then reads the file as anyone would. */
+/** Today's reading of the invented catchment in the terminal: makes the stations from their CSV files, then reads the file as anyone would. */
 import { readFile } from 'node:fs/promises';
 import { readStation } from '@rillage/sdk';
 import { writeRecordFile } from './build-section.mjs';
 import { writeFittedStationFile } from './fitted-station.mjs';
+import { writeFurtherStationFiles } from './further-stations.mjs';
+import { publishStation } from './publish.mjs';
 
 const WIDTH = 78;
 
 // what the page of the column computes from
 await writeRecordFile();
 
-const { name, reading } = readStation(await readFile(await writeFittedStationFile(), 'utf8'));
+const file = await writeFittedStationFile();
+const station = readStation(await readFile(file, 'utf8'));
+await publishStation(station, file);
+await writeFurtherStationFiles();
+
+const { name, reading } = station;
 const percent = (share) => `${(100 * share).toFixed(1)} %`;
 const range = (entry, unit) => (entry.range ? `likely ${unit(entry.range.low)} to ${unit(entry.range.high)}` : 'range not assessed');
 const days = (value) => `${Math.round(value)} days`;

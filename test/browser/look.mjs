@@ -1,6 +1,6 @@
 /**
- * Pictures of the portal page to be looked at: wide, 360 and 320 px, light, dark, forced colours, print, other languages, large text.
- * `node test/browser/look.mjs [name …]` writes .cache/looks/*.png from the built site and, where the site has no station yet, the fixture.
+ * Pictures of the portal's pages to be looked at: wide, 360 and 320 px, light, dark, forced colours, print, other languages, large text.
+ * `node test/browser/look.mjs [name …]` writes .cache/looks/*.png from the built site and, with --fixture, the fixture's station.
  */
 import { mkdir, readFile } from 'node:fs/promises';
 import puppeteer from 'puppeteer-core';
@@ -10,6 +10,14 @@ import { findEngine } from './config/find.mjs';
 
 const dark = [{ name: 'prefers-color-scheme', value: 'dark' }];
 const forced = [{ name: 'forced-colors', value: 'active' }];
+const pages = {
+  list: 'index.html',
+  chalk: 'stations/ambrel-spring.html',
+  clay: 'stations/ottering-beck.html',
+  dry: 'stations/tessen-sike.html',
+  embed: 'embed.html',
+};
+/** One stream's page, and each other page in the six ways that matter most. */
 const looks = {
   wide: { width: 1280 },
   'wide-dark': { width: 1280, features: dark },
@@ -44,6 +52,16 @@ const looks = {
   'no-script': { width: 900, script: false },
   print: { width: 794, print: true },
 };
+for (const [name, page] of Object.entries(pages)) {
+  Object.assign(looks, {
+    [name]: { page, width: 1280 },
+    [`${name}-dark`]: { page, width: 1280, features: dark },
+    [`${name}-360`]: { page, width: 360 },
+    [`${name}-360-dark`]: { page, width: 360, features: dark },
+    [`${name}-print`]: { page, width: 794, print: true },
+    [`${name}-no-script`]: { page, width: 900, script: false },
+  });
+}
 
 const folder = at('.cache/looks');
 await mkdir(folder, { recursive: true });
@@ -81,8 +99,8 @@ async function take(name, look) {
   await page.setJavaScriptEnabled(look.script !== false);
   await emulate(page, look.features ?? []);
   if (look.change || fixture) await answerWith(page, look.change ?? ((station) => station));
-  await page.goto(`http://127.0.0.1:${server.address().port}/`, { waitUntil: 'networkidle0' });
-  if (look.script !== false) await page.evaluate(setUp, look);
+  await page.goto(`http://127.0.0.1:${server.address().port}/${look.page ?? 'stations/thessle-brook.html'}`, { waitUntil: 'networkidle0' });
+  if (look.script !== false && !look.page) await page.evaluate(setUp, look);
   for (const key of look.keys ?? []) await page.keyboard.press(key);
   if (look.keys) await new Promise((settled) => setTimeout(settled, 300));
   if (look.print) await page.pdf({ path: `${folder}/${name}.pdf`, format: 'A4', printBackground: true });
@@ -117,7 +135,7 @@ async function answerWith(page, change) {
   const body = change(station);
   await page.setRequestInterception(true);
   page.on('request', (request) => {
-    if (!request.url().endsWith('/data/thessle-brook.json')) return request.continue();
+    if (!request.url().endsWith('/data/thessle-brook-public.json')) return request.continue();
     return request.respond(
       body ? { status: 200, contentType: 'application/json', body: JSON.stringify(body) } : { status: 404, body: 'not here' },
     );

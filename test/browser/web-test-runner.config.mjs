@@ -6,6 +6,7 @@ import { esbuildPlugin } from '@web/dev-server-esbuild';
 import { defaultReporter } from '@web/test-runner';
 import { a11ySnapshotPlugin } from '@web/test-runner-commands/plugins';
 import { at } from '../../demo-site/tools/paths.mjs';
+import { badAnswers } from './config/bad-answers.mjs';
 import { emulateCommand, screenshotCommand, viewportCommand } from './config/commands.mjs';
 import { countsReporter } from './config/counts.mjs';
 import { enginesWanted } from './config/find.mjs';
@@ -34,6 +35,6 @@ export default {
     screenshotCommand(),
     ...(engines.includes('webkit') ? [webkitHost()] : []),
   ],
-  middleware: [strictPolicy],
+  middleware: [strictPolicy, badAnswers],
   reporters: [defaultReporter({ reportTestResults: true, reportTestProgress: false }), countsReporter(process.env.RILLAGE_COUNTS)],
 };

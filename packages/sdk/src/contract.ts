@@ -380,3 +380,13 @@ export interface Station {
   /** sha-256 over the canonical JSON of everything else. */
   seal: string;
 }
+
+/**
+ * What of a station the public is shown: all that the elements draw from, nothing that a morning's work continues from. A small file to lay
+ * beside the page, while the station itself stays with the service.
+ */
+export interface StationExcerpt extends Omit<Station, 'kind' | 'members' | 'fit' | 'recent' | 'balance' | 'receipt'> {
+  kind: 'rillage-excerpt';
+  /** Seal of the station that it was taken from. */
+  stationSeal: string;
+}

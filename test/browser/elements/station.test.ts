@@ -270,6 +270,24 @@ describe('rillage-station: races, order, leaving', () => {
     await until(() => element.state === 'failed', 'failed');
   });
 
+  it('takes a station’s public excerpt, from an address as from a property', async () => {
+    const { members: _members, seal, ...content } = await fixture();
+    const excerpt = { ...content, kind: 'rillage-excerpt' as const, stationSeal: seal, seal };
+    network = answering(() => json(excerpt));
+    const element = await mount('rillage-station', { src: address(), staleAfter: 'never' });
+    await until(() => element.state === 'ready', 'ready');
+    const plot = await mount('rillage-age-plot', {}, element);
+    expect(shown(plot)).to.contain('Half of the water is older than');
+    const given = await mount('rillage-station', { station: excerpt, staleAfter: 'never' });
+    expect(given.view.station!.kind).to.equal('rillage-excerpt');
+    network.stop();
+    network = answering(() => json({ ...excerpt, distribution: { ...excerpt.distribution, preRecordShare: 3 } }));
+    const damaged = await mount('rillage-station', { src: address() });
+    await until(() => damaged.state === 'failed', 'failed');
+    await settled(damaged);
+    expect(shown(damaged)).to.contain('distribution.preRecordShare');
+  });
+
   it('takes a property before an address', async () => {
     const station = await fixture();
     network = answering(() => json({ ...station, id: 'from-address' }));

@@ -5,7 +5,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { type Reading, readReading, readStation } from '@rillage/sdk';
+import { type Reading, readExcerpt, readReading, readStation } from '@rillage/sdk';
 
 /* The jobs run for real, as processes, over the built SDK; so `npm run build` comes first, as `npm test` has it. */
 const at = (path: string): string => fileURLToPath(new URL(`../../../${path}`, import.meta.url));
@@ -97,6 +97,16 @@ describe.each(['node', 'deno'] as const)('the morning job in %s', (name) => {
     // Within one runtime the bytes are the same; between two, exp and pow differ in the last bit (no standard fixes it).
     firstReading ??= station.reading;
     expectNear(station.reading, firstReading);
+  });
+
+  it('writes the public’s excerpt where it is given a fourth path, of the same station', () => {
+    const paths = morning();
+    const excerpt = join(paths.folder, 'excerpt.json');
+    const { status, out } = runtime(script, [...argsOf(paths), excerpt], paths.folder);
+    expect(status, out).toBe(0);
+    const [station, shown] = [readStation(textOf(paths.station)), readExcerpt(textOf(excerpt))];
+    expect(shown).toMatchObject({ stationSeal: station.seal, reading: station.reading, history: station.history });
+    expect(textOf(excerpt)).not.toContain('checkpoint');
   });
 
   it('run twice, writes nothing the second time', () => {

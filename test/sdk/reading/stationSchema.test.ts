@@ -2,10 +2,11 @@ import { readFileSync } from 'node:fs';
 import { Ajv2020 } from 'ajv/dist/2020.js';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { makeExcerpt } from '../../../packages/sdk/src/reading/makeExcerpt.js';
 import { makeStation } from '../../../packages/sdk/src/reading/makeStation.js';
 import { checkSchema } from '../../../packages/sdk/src/reading/schemaCheck.js';
-import { readingSchema, stationSchema } from '../../../packages/sdk/src/reading/stationSchema.js';
-import { writeStation } from '../../../packages/sdk/src/reading/stationText.js';
+import { excerptSchema, readingSchema, stationSchema } from '../../../packages/sdk/src/reading/stationSchema.js';
+import { writeExcerpt, writeStation } from '../../../packages/sdk/src/reading/stationText.js';
 import { SDK_VERSION } from '../../../packages/sdk/src/reading/version.js';
 import { handmadeForcing, handmadeRun } from './handmade.js';
 
@@ -41,6 +42,25 @@ describe('station.schema.json', () => {
   it.each(['single', 'ensemble', 'withheld'] as const)('takes a station as written: %s', (name) => {
     expect(validate(plain(name)), JSON.stringify(validate.errors)).toBe(true);
     expect(checkSchema(plain(name), stationSchema)).toEqual([]);
+  });
+});
+
+describe('excerpt.schema.json', () => {
+  const excerptPublished = JSON.parse(
+    readFileSync(new URL('../../../packages/sdk/src/reading/excerpt.schema.json', import.meta.url), 'utf8'),
+  ) as object;
+  const fits = new Ajv2020({ strict: true, strictTypes: false }).compile(excerptPublished);
+
+  it('is the schema of the code', () => {
+    expect(excerptPublished).toEqual(JSON.parse(JSON.stringify(excerptSchema)));
+  });
+
+  it.each(['single', 'ensemble', 'withheld'] as const)('takes an excerpt as written, and no station: %s', (name) => {
+    const excerpt = JSON.parse(writeExcerpt(makeExcerpt(stations[name]))) as Record<string, unknown>;
+    expect(fits(excerpt), JSON.stringify(fits.errors)).toBe(true);
+    expect(checkSchema(excerpt, excerptSchema)).toEqual([]);
+    expect(fits(plain(name))).toBe(false);
+    expect(validate(excerpt)).toBe(false);
   });
 });
 

@@ -1,5 +1,5 @@
 import { LitElement, css, html, type PropertyValues, type TemplateResult } from 'lit';
-import type { Reading, Station } from '@rillage/sdk';
+import type { Reading, Station, StationExcerpt } from '@rillage/sdk';
 import { date, moment, msPerDay } from '../shared/format.js';
 import { Language } from '../shared/language.js';
 import type { Messages } from '../shared/messages.js';
@@ -12,7 +12,7 @@ import { StationSource, type Sourced } from './source.js';
 import { freshness, patience, type Freshness } from './stale.js';
 
 /**
- * Loads a station or a reading and hands it to the Rillage elements inside. It shows nothing of its own but what must be said about the
+ * Loads a station, its excerpt or a reading, and hands it to the Rillage elements inside. It shows nothing of its own but what must be said about the
  * data: that they load, are old, come from a kept copy, are withheld, or could not be had.
  *
  * @slot - The elements that show the station, and any content of the page.
@@ -59,7 +59,7 @@ export class RillageStation extends LitElement {
     sourced: { state: true },
   };
 
-  /** Address of a station or reading file. Nothing else is ever fetched. */
+  /** Address of a file: a station, its excerpt or a reading. Nothing else is ever fetched. */
   declare src: string | null;
   /** How old the data may be before they look old: days (`2`), a duration (`PT36H`), or `never`. Default three days. */
   declare staleAfter: string | null;
@@ -67,8 +67,8 @@ export class RillageStation extends LitElement {
   declare timeZone: string;
   /** What holds, reflected for styling; read it, do not set it: `empty`, `loading`, `ready`, `stale`, `offline`, `withheld` or `failed`. */
   declare state: StationState;
-  /** A station or reading handed over directly; goes before `src` and before a JSON child. */
-  declare station: Station | Reading | null;
+  /** A station, its excerpt or a reading handed over directly; goes before `src` and before a JSON child. */
+  declare station: Station | StationExcerpt | Reading | null;
   /** Messages of this element to replace, by key. */
   declare messages: Messages | undefined;
   /** The reader's clock, milliseconds; for tests and replays. */

@@ -1,4 +1,4 @@
-import type { Reading, Station } from '@rillage/sdk';
+import type { Reading, Station, StationExcerpt } from '@rillage/sdk';
 import { openCache } from '../shared/storage.js';
 import { checkStation } from '../shared/check/station.js';
 import { byteCap, load, LoadFailure, type LoadProblem } from './load.js';
@@ -15,7 +15,7 @@ export interface SourceProblem {
 export type Sourced =
   | { kind: 'empty' }
   | { kind: 'loading' }
-  | { kind: 'data'; station: Station | null; reading: Reading | null; problem: SourceProblem | null; keptAt: number };
+  | { kind: 'data'; station: Station | StationExcerpt | null; reading: Reading | null; problem: SourceProblem | null; keptAt: number };
 
 /**
  * Where a station comes from, one at a time: opening another, or closing, aborts what runs and drops what comes late.

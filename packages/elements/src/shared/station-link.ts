@@ -1,4 +1,4 @@
-import type { Reading, Station } from '@rillage/sdk';
+import type { Reading, Station, StationExcerpt } from '@rillage/sdk';
 import type { ReactiveController, ReactiveControllerHost } from 'lit';
 
 export type StationState = 'empty' | 'loading' | 'ready' | 'stale' | 'offline' | 'withheld' | 'failed';
@@ -7,7 +7,8 @@ export type StationState = 'empty' | 'loading' | 'ready' | 'stale' | 'offline' |
 export interface StationView {
   /** The most serious of what holds; the data may be there in any of them but `empty` and `loading`. */
   state: StationState;
-  station: Station | null;
+  /** The file as it came: a station, or its public excerpt. */
+  station: Station | StationExcerpt | null;
   reading: Reading | null;
   stale: boolean;
   offline: boolean;

@@ -99,3 +99,14 @@ export function joinHistory(old: StationHistory, added: StationHistory): Station
 function rounded(value: number, digits: number): number | null {
   return Number.isFinite(value) ? Number(value.toFixed(digits)) : null;
 }
+
+/** The last `steps` of a history; all of it where it has no more. Not changed. */
+export function lastOfHistory(history: StationHistory, steps: number): StationHistory {
+  const drop = Math.max(0, history.flow.length - steps);
+  const cut = <T>(value: T): T => {
+    if (Array.isArray(value)) return value.slice(drop) as T;
+    if (typeof value !== 'object' || value === null) return value;
+    return Object.fromEntries(Object.entries(value).map(([key, series]) => [key, cut(series as unknown)])) as T;
+  };
+  return { ...cut(history), start: instantText(instantMs(history.start, 'history.start') + drop * history.stepDays * DAY_MS) };
+}

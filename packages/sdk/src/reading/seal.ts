@@ -1,12 +1,11 @@
-import { type Station } from '../contract.js';
 import { sha256Hex } from '../numeric/hash.js';
 import { canonicalJson } from './canonicalJson.js';
 
 /**
- * The station with its seal: sha-256, in hex, of the UTF-8 bytes of the canonical JSON of everything else. It shows damage and careless
+ * A station's or an excerpt's content with its seal: sha-256, in hex, of the UTF-8 bytes of the canonical JSON of everything else. It shows damage and careless
  * edits; it is no signature, since anyone can compute it.
  */
-export function seal(content: Omit<Station, 'seal'>): Station {
+export function seal<Content extends object>(content: Content): Content & { seal: string } {
   return { ...content, seal: sealOf(content) };
 }
 

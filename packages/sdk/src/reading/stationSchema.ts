@@ -1,13 +1,15 @@
 import { type Schema } from './schemaCheck.js';
 
 /*
- * The published schemas (JSON Schema 2020-12). station.schema.json beside this file is the same in JSON; a test holds the two equal.
+ * The published schemas (JSON Schema 2020-12). station.schema.json and excerpt.schema.json beside this file are the same in JSON; a test holds
+ * them equal.
  * Fields may be added without a new version, so readers pass over what they do not know.
  */
 
 const text = (maxLength = 2000): Schema => ({ type: 'string', maxLength });
 const instant: Schema = { type: 'string', pattern: '^\\d{4}-\\d{2}-\\d{2}T\\d{2}:\\d{2}(:\\d{2}(\\.\\d+)?)?(Z|[+-]\\d{2}:\\d{2})$' };
 const share: Schema = { type: 'number', minimum: 0, maximum: 1 };
+const hash: Schema = { type: 'string', pattern: '^[0-9a-f]{64}$' };
 const orNull = (type: 'number' | 'string'): Schema => ({ type: [type, 'null'] });
 const shareOrNull: Schema = { type: ['number', 'null'], minimum: 0, maximum: 1 };
 const object = (required: string[], properties: Record<string, Schema>): Schema => ({ type: 'object', required, properties });
@@ -28,7 +30,7 @@ const $defs: Record<string, Schema> = {
     required: ['days', 'beyondRecord', 'range'],
     properties: { days: { type: 'number', minimum: 0 }, beyondRecord: { type: 'boolean' }, range: { $ref: '#/$defs/range' } },
   },
-  source: object(['name', 'sha256'], { name: text(), sha256: { type: 'string', pattern: '^[0-9a-f]{64}$' } }),
+  source: object(['name', 'sha256'], { name: text(), sha256: hash }),
   reading: object(
     [
       'kind',
@@ -135,6 +137,23 @@ const $defs: Record<string, Schema> = {
 /** A reading on its own, as the morning job writes it. */
 export const readingSchema: Schema = { $ref: '#/$defs/reading', $defs };
 
+/** What a station and its public excerpt have in common. */
+const about: Record<string, Schema> = {
+  id: { type: 'string', pattern: '^[A-Za-z0-9][A-Za-z0-9_-]{0,79}$' },
+  name: text(),
+  invented: { type: 'boolean' },
+  description: text(20_000),
+  latitude: { type: 'number', minimum: -90, maximum: 90 },
+  areaKm2: { type: 'number', exclusiveMinimum: 0 },
+  of: text(200),
+  history: { $ref: '#/$defs/history' },
+  distribution: { $ref: '#/$defs/distribution' },
+  reading: { $ref: '#/$defs/reading' },
+  samples: object(['count', 'last'], { count: { type: 'integer', minimum: 0 }, last: orNull('string') }),
+  signedOff: object(['by', 'at'], { by: text(), at: text(80) }),
+  seal: hash,
+};
+
 /** A station file. */
 export const stationSchema: Schema = {
   $schema: 'https://json-schema.org/draft/2020-12/schema',
@@ -145,28 +164,32 @@ export const stationSchema: Schema = {
   ...object(['kind', 'version', 'id', 'name', 'of', 'members', 'history', 'distribution', 'reading', 'seal'], {
     kind: { const: 'rillage-station' },
     version: { const: 1 },
-    id: { type: 'string', pattern: '^[A-Za-z0-9][A-Za-z0-9_-]{0,79}$' },
-    name: text(),
-    invented: { type: 'boolean' },
-    description: text(20_000),
-    latitude: { type: 'number', minimum: -90, maximum: 90 },
-    areaKm2: { type: 'number', exclusiveMinimum: 0 },
-    of: text(200),
+    ...about,
     members: {
       type: 'array',
       minItems: 1,
       maxItems: 2000,
       items: object(['weight', 'checkpoint'], { weight: { type: 'number', minimum: 0 }, checkpoint: { $ref: '#/$defs/checkpoint' } }),
     },
-    history: { $ref: '#/$defs/history' },
     recent: { $ref: '#/$defs/recent' },
     balance: object(['inflow', 'outflow'], { inflow: { type: 'number' }, outflow: { type: 'number' } }),
-    distribution: { $ref: '#/$defs/distribution' },
-    reading: { $ref: '#/$defs/reading' },
     receipt: { type: 'object' },
-    samples: object(['count', 'last'], { count: { type: 'integer', minimum: 0 }, last: orNull('string') }),
-    signedOff: object(['by', 'at'], { by: text(), at: text(80) }),
-    seal: { type: 'string', pattern: '^[0-9a-f]{64}$' },
+  }),
+  $defs,
+};
+
+/** The public excerpt of a station file, without what a morning's work continues from. */
+export const excerptSchema: Schema = {
+  $schema: 'https://json-schema.org/draft/2020-12/schema',
+  $id: 'urn:rillage:excerpt:1',
+  title: 'Rillage station excerpt, version 1',
+  description:
+    'What of a station the public is shown. The seal is made as a station’s; stationSeal is the seal of the station it was taken from.',
+  ...object(['kind', 'version', 'id', 'name', 'of', 'history', 'distribution', 'reading', 'stationSeal', 'seal'], {
+    kind: { const: 'rillage-excerpt' },
+    version: { const: 1 },
+    ...about,
+    stationSeal: hash,
   }),
   $defs,
 };

@@ -1,10 +1,10 @@
-import { type Reading, type Station } from '../contract.js';
+import { type Reading, type Station, type StationExcerpt } from '../contract.js';
 import { RillageError, throwIfAny } from '../errors.js';
 import { canonicalJson } from './canonicalJson.js';
 import { parseJson } from './parseJson.js';
-import { checkSchema } from './schemaCheck.js';
+import { checkSchema, type Schema } from './schemaCheck.js';
 import { seal, sealOf } from './seal.js';
-import { readingSchema, stationSchema } from './stationSchema.js';
+import { excerptSchema, readingSchema, stationSchema } from './stationSchema.js';
 
 const VERSION = 1;
 
@@ -28,8 +28,46 @@ export function writeStation(station: Station): string {
  *   'newer-version', 'unknown-version', 'seal-missing', 'seal-broken', 'shape'
  */
 export function readStation(text: string, options: ReadTextOptions = {}): Station {
-  const value = parseJson(text, { what: 'a station', ...options });
-  const record = expectKind(value, 'rillage-station', 'not-a-station');
+  const station = readSealed(text, 'a station', options, 'rillage-station', 'not-a-station', stationSchema) as unknown as Station;
+  checkLengths(station);
+  return { ...station, distribution: withTypedArrays(station.distribution) };
+}
+
+/** An excerpt as text: canonical JSON, freshly sealed, one line; errors as {@link writeStation}. */
+export function writeExcerpt(excerpt: StationExcerpt): string {
+  const { seal: _old, ...content } = excerpt;
+  return `${canonicalJson(seal(content))}\n`;
+}
+
+/** An excerpt from text that may be anything; errors as {@link readStation}, with 'not-an-excerpt'. */
+export function readExcerpt(text: string, options: ReadTextOptions = {}): StationExcerpt {
+  const excerpt = readSealed(text, 'an excerpt', options, 'rillage-excerpt', 'not-an-excerpt', excerptSchema) as unknown as StationExcerpt;
+  checkLengths(excerpt);
+  return { ...excerpt, distribution: withTypedArrays(excerpt.distribution) };
+}
+
+/** A reading as text: canonical JSON, one line. */
+export function writeReading(reading: Reading): string {
+  return `${canonicalJson(reading)}\n`;
+}
+
+/** A reading from text that may be anything; errors as {@link readStation}, with 'not-a-reading', without seals. */
+export function readReading(text: string, options: ReadTextOptions = {}): Reading {
+  const value = parseJson(text, { what: 'a reading', ...options });
+  const record = expectKind(value, 'rillage-reading', 'not-a-reading');
+  throwIfAny(checkSchema(record, readingSchema));
+  return record as unknown as Reading;
+}
+
+function readSealed(
+  text: string,
+  what: string,
+  options: ReadTextOptions,
+  kind: string,
+  code: string,
+  schema: Schema,
+): Record<string, unknown> {
+  const record = expectKind(parseJson(text, { what, ...options }), kind, code);
   if (typeof record['seal'] !== 'string') {
     throw new RillageError({
       code: 'seal-missing',
@@ -49,23 +87,8 @@ export function readStation(text: string, options: ReadTextOptions = {}): Statio
       hint: 'The file was changed after it was written. Go back to a copy, or make the station again.',
     });
   }
-  throwIfAny(checkSchema(record, stationSchema));
-  const station = record as unknown as Station;
-  checkLengths(station);
-  return { ...station, distribution: withTypedArrays(station.distribution) };
-}
-
-/** A reading as text: canonical JSON, one line. */
-export function writeReading(reading: Reading): string {
-  return `${canonicalJson(reading)}\n`;
-}
-
-/** A reading from text that may be anything; errors as {@link readStation}, with 'not-a-reading', without seals. */
-export function readReading(text: string, options: ReadTextOptions = {}): Reading {
-  const value = parseJson(text, { what: 'a reading', ...options });
-  const record = expectKind(value, 'rillage-reading', 'not-a-reading');
-  throwIfAny(checkSchema(record, readingSchema));
-  return record as unknown as Reading;
+  throwIfAny(checkSchema(record, schema));
+  return record;
 }
 
 function expectKind(value: unknown, kind: string, code: string): Record<string, unknown> {
@@ -76,6 +99,9 @@ function expectKind(value: unknown, kind: string, code: string): Record<string, 
       path: 'kind',
       expected: kind,
       received: typeof record['kind'] === 'string' ? record['kind'] : 'other data',
+      ...(kind === 'rillage-station' && record['kind'] === 'rillage-excerpt'
+        ? { hint: 'This is a station’s public excerpt, from which nothing can be continued; give the station file itself.' }
+        : {}),
     });
   }
   const version = record['version'];
@@ -92,7 +118,7 @@ function expectKind(value: unknown, kind: string, code: string): Record<string, 
   throw new RillageError({ code: 'unknown-version', path: 'version', expected: `version ${VERSION}`, received: String(version) });
 }
 
-function checkLengths({ history, distribution, recent }: Station): void {
+function checkLengths({ history, distribution, recent }: Pick<Station, 'history' | 'distribution' | 'recent'>): void {
   const steps = history.flow.length;
   const wrong: { path: string; expected: number; received: number }[] = [];
   const expectLength = (path: string, list: ArrayLike<unknown> | null | undefined, expected: number): void => {
