@@ -3,6 +3,7 @@ import './rillage-age-history/define.js';
 import './rillage-age-plot/define.js';
 import './rillage-column-view/define.js';
 import './rillage-explorer/define.js';
+import './rillage-forcing-input/define.js';
 import './rillage-reading/define.js';
 import './rillage-station/define.js';
 

@@ -1,4 +1,12 @@
-import { RillageAgeHistory, RillageAgePlot, RillageColumnView, RillageExplorer, RillageReading, RillageStation } from './classes.js';
+import {
+  RillageAgeHistory,
+  RillageAgePlot,
+  RillageColumnView,
+  RillageExplorer,
+  RillageForcingInput,
+  RillageReading,
+  RillageStation,
+} from './classes.js';
 import { define, defineWithPrefix } from './shared/define.js';
 import { everySpeakerReads } from './shared/language.js';
 import { putMessages, type Messages } from './shared/messages.js';
@@ -27,6 +35,7 @@ const elements = {
   'age-plot': RillageAgePlot,
   'column-view': RillageColumnView,
   explorer: RillageExplorer,
+  'forcing-input': RillageForcingInput,
   reading: RillageReading,
   station: RillageStation,
 };

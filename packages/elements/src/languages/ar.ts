@@ -1,4 +1,5 @@
 import type { Messages } from '../shared/messages.js';
+import { forcingInput } from './ar-forcing-input.js';
 import { throughTime } from './ar-through-time.js';
 
 /** Arabic, written from right to left. */
@@ -150,4 +151,5 @@ export const messages: Messages = {
   'station.newer': 'الملف من إصدار أحدث ({at}) مما تفهمه هذه الصفحة (1).',
 
   ...throughTime,
+  ...forcingInput,
 };

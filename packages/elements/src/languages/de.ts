@@ -1,4 +1,5 @@
 import type { Messages } from '../shared/messages.js';
+import { forcingInput } from './de-forcing-input.js';
 import { throughTime } from './de-through-time.js';
 
 /** German. */
@@ -155,4 +156,5 @@ export const messages: Messages = {
   'station.newer': 'Die Datei ist von neuerer Fassung ({at}), als diese Seite versteht (1).',
 
   ...throughTime,
+  ...forcingInput,
 };
