@@ -1,11 +1,11 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { CellEditLayout, Layout } from '@rillage/sdk';
 import { cleanText } from '../shared/text.js';
-import type { Speech } from './field-view.js';
+import { lineName, type Speech } from './field-view.js';
 import { setAt } from './fields.js';
-import { cellsAt, lineAt, lineCount, type ForcingFile } from './text-rows.js';
+import { cellsAt, lineAt, lineCount, namesOf, type ForcingFile } from './text-rows.js';
 
-/** Where a reader is about to change a value: file by its place, line and column from 1. */
+/** Where a reader is about to change a value: file by its place, line (0: none yet) and column from 1. */
 export interface Pen {
   file: number;
   row: number;
@@ -24,7 +24,7 @@ export function editView(
   const source = layout.sources[pen.file];
   const file = files[pen.file];
   const cells = source && file ? cellsAt(file, pen.row, source.splitAt, source.remarkMark) : null;
-  const names = source && file ? namesOf(file, source.splitAt, source.remarkMark, source.namesRow) : [];
+  const names = source && file ? namesOf(file, source) : [];
   const chosen = (event: Event): number => Number((event.target as HTMLInputElement).value);
   const record = (event: SubmitEvent): void => {
     event.preventDefault();
@@ -42,17 +42,17 @@ export function editView(
       <div class="fields">
         <label class="field"
           ><span>${speech.say('forcing.file')}</span>
-          <select @change=${(event: Event) => move({ ...pen, file: chosen(event) })}>
+          <select @change=${(event: Event) => move({ ...pen, file: chosen(event), position: positionOf(layout, chosen(event), '') })}>
             ${files.map(({ name }, index) => html`<option value=${index} .selected=${index === pen.file}>${cleanText(name, 60)}</option>`)}
           </select></label
         >
         <label class="field"
-          ><span>${speech.say('forcing.lineIn')}</span>
+          ><span>${speech.say('forcing.line')}</span>
           <input
             type="number"
             min="1"
             max=${file ? lineCount(file) : 1}
-            .value=${String(pen.row)}
+            .value=${pen.row ? String(pen.row) : ''}
             @change=${(event: Event) => move({ ...pen, row: chosen(event) })}
         /></label>
         ${
@@ -75,14 +75,16 @@ export function editView(
             : nothing
         }
       </div>
-      <p role="status">${cells ? html`<code dir="ltr">${cleanText(lineAt(file!, pen.row), 200)}</code>` : speech.say('forcing.noLine')}</p>
+      <p role="status">
+        ${cells ? html`<code dir="ltr">${cleanText(lineAt(file!, pen.row), 200)}</code>` : pen.row ? speech.say('forcing.noLine') : nothing}
+      </p>
       <p><button part="button" ?disabled=${!cells}>${speech.say('forcing.record')}</button></p>
     </form>
     <ul class="remarks">
       ${layout.sources.flatMap(({ edits = [], splitAt, remarkMark }, index) =>
         edits.map((edit) => {
           const before = files[index] && cellsAt(files[index], edit.row, splitAt, remarkMark)?.[edit.position - 1];
-          const place = `${cleanText(files[index]?.name, 60)}, ${speech.say('forcing.line', { row: edit.row })}`;
+          const place = `${cleanText(files[index]?.name, 60)}, ${lineName(speech, edit.row)}`;
           const values = { place, before: `“${cleanText(before ?? '', 60)}”`, after: `“${cleanText(edit.value, 60)}”` };
           return html`<li part="edit">
             <p><bdi>${speech.say('forcing.edited', values)}</bdi> <bdi>${cleanText(edit.why ?? '', 400)}</bdi></p>
@@ -115,16 +117,3 @@ export function withoutEdit(layout: Layout, index: number, edit: CellEditLayout)
     (layout.sources[index]?.edits ?? []).filter((other) => other !== edit),
   );
 }
-
-/** The names row, counted as the layout counts: without remarks and blank lines. */
-function namesOf(file: ForcingFile, splitAt?: string, remarkMark?: string, namesRow = 1): string[] {
-  let row = 0;
-  for (let line = 1; line <= Math.min(lineCount(file), mostHead) && namesRow > 0; line++) {
-    const cells = cellsAt(file, line, splitAt, remarkMark);
-    if (cells && ++row === namesRow) return cells;
-  }
-  return [];
-}
-
-// Description above the names is seldom longer.
-const mostHead = 500;

@@ -1,5 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { Layout } from '@rillage/sdk';
+import { number } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
 import { cleanText } from '../shared/text.js';
 import type { Field, FieldValue } from './fields.js';
@@ -9,9 +10,12 @@ export type Speech = Language<ForcingInputKey>;
 
 /** A word of ours where there is one, else the name as it came. */
 export function word(speech: Speech, name: string): string {
-  const key = `is.${name}`;
+  const key = `is.${name === 'refuse' ? 'stop' : name}`;
   return Object.hasOwn(forcingInputMessages, key) ? speech.say(key as ForcingInputKey) : cleanText(name, 60);
 }
+
+/** `Line 12`, as an editor counts. */
+export const lineName = (speech: Speech, row: number): string => `${speech.say('forcing.line')} ${number(speech.tag, {}).format(row)}`;
 
 export const labelOf = (speech: Speech, { label, series }: Field): string =>
   speech.say(label, series === undefined ? {} : { series: word(speech, series) });

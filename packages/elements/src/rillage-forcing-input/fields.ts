@@ -1,7 +1,7 @@
 import type { ColumnLayout, GapRule, Holds, Layout, SourceLayout } from '@rillage/sdk';
 import type { ForcingInputKey } from './messages.js';
 
-export type FieldValue = string | number | boolean | null | undefined | string[];
+export type FieldValue = string | number | boolean | null | undefined | string[] | number[];
 
 /** One thing of a layout that a reader may change. */
 export interface Field {
@@ -87,7 +87,14 @@ export function sourceFields(layout: Layout, index: number): Field[] {
       setAt(layout, ['sources', index, ...path], value);
   const written = at('time', 'writtenAs');
   const open = time.writtenAs === null;
+  const positions = at('time', 'columns');
   return kept([
+    {
+      label: 'forcing.time',
+      value: time.columns.map(String),
+      with: (marks) => positions((marks as string[]).map(Number)),
+      kind: 'list',
+    },
     { label: 'forcing.writtenAs', value: time.writtenAs, with: (value) => written(value ?? null), usual: times, open },
     !!time.from?.length && {
       label: 'forcing.lastDayIncluded',

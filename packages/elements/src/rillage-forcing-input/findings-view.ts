@@ -1,7 +1,7 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { Finding, Issue } from '@rillage/sdk';
 import { cleanText } from '../shared/text.js';
-import type { Speech } from './field-view.js';
+import { lineName, type Speech } from './field-view.js';
 import { lineAt, type ForcingFile } from './text-rows.js';
 
 /** A finding, or a problem that stopped the reading, in one shape. */
@@ -53,7 +53,7 @@ export function remarksView(
       const file = files[index];
       const line = (row: number): TemplateResult =>
         html`<li>
-          <span>${speech.say('forcing.line', { row })}</span> <code dir="ltr">${file ? cleanText(lineAt(file, row), 120) : nothing}</code>
+          <span>${lineName(speech, row)}</span> <code dir="ltr">${file ? cleanText(lineAt(file, row), 120) : nothing}</code>
           ${
             file && change && code !== 'remarks'
               ? html`<button type="button" part="button" @click=${() => change(index, row, where)}>${speech.say('forcing.change')}</button>`

@@ -3,7 +3,7 @@ import type { Layout } from '@rillage/sdk';
 import { cleanText } from '../shared/text.js';
 import { columnFields, recordFields, sourceFields, type Field } from './fields.js';
 import { fieldsView, labelOf, type Speech } from './field-view.js';
-import { lineAt, type ForcingFile } from './text-rows.js';
+import { lineAt, namesOf, type ForcingFile } from './text-rows.js';
 
 /** A group of fields with the place they are of. */
 interface Group {
@@ -12,21 +12,23 @@ interface Group {
   fields: Field[];
 }
 
-/** How the files are read: what is open first, in words; then the whole record, then each file with its columns. */
+/** How the files are read: what is open first, in words; then the whole record, then each file with its columns, folded away once it is read. */
 export function layoutView(
   speech: Speech,
   files: readonly ForcingFile[],
   layout: Layout,
+  unfolded: boolean,
   remarks: (file: number) => TemplateResult | typeof nothing,
   change: (layout: Layout) => void,
   focus: (id: string) => void,
 ): TemplateResult {
   const whole: Group = { id: 'whole', place: speech.say('forcing.whole'), fields: recordFields(layout) };
+  const heads = layout.sources.map((source, index) => (files[index] ? namesOf(files[index], source) : []));
   const sources = layout.sources.map((source, index) => ({
     own: { id: `file-${index}`, place: cleanText(source.name || files[index]?.name, 80), fields: sourceFields(layout, index) },
     columns: source.columns.map(({ position, name }, place): Group => ({
       id: `file-${index}-${place}`,
-      place: `${position}: ${cleanText(name, 60)}`,
+      place: `${position}: ${cleanText(name || heads[index]![position - 1], 60)}`,
       fields: columnFields(layout, index, place),
     })),
   }));
@@ -56,14 +58,12 @@ export function layoutView(
       ${fieldsView(speech, whole.id, whole.fields, change)}
     </fieldset>
     ${sources.map(({ own, columns }, index) => {
-      const { splitAt = ',', time } = layout.sources[index]!;
+      const { splitAt = ',' } = layout.sources[index]!;
       const marks: Record<string, string> = { blanks: speech.say('forcing.blanks'), '\t': speech.say('forcing.tab') };
       const file = files[index];
-      return html`<fieldset>
-        <legend><bdi>${own.place}</bdi></legend>
-        <p class="note">
-          ${speech.say('forcing.split', { mark: marks[splitAt] ?? splitAt, columns: [...(time.from ?? []), ...time.columns].join(', ') })}
-        </p>
+      return html`<details ?open=${unfolded}>
+        <summary><bdi>${own.place}</bdi></summary>
+        <p class="note">${speech.say('forcing.split', { mark: marks[splitAt] ?? `“${splitAt}”` })}</p>
         ${
           file
             ? html`<pre tabindex="0" aria-label=${speech.say('forcing.head')} dir="ltr">
@@ -79,6 +79,6 @@ ${Array.from({ length: 6 }, (_, line) => `${cleanText(lineAt(file, line + 1), 20
               ${fieldsView(speech, id, fields, change)}
             </fieldset>`,
         )}
-      </fieldset>`;
+      </details>`;
     })}`;
 }

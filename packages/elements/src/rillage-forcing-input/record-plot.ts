@@ -23,7 +23,7 @@ export class RecordPlot {
   #below = '';
   #showsTable = false;
   #stops: number[] = [];
-  #frame: Frame | null = null;
+  #still: Still | null = null;
   #table: DataTable;
   #size: PictureSize;
   #cursor: Cursor;
@@ -40,30 +40,14 @@ export class RecordPlot {
   render(read: ForcingRead): TemplateResult {
     const record = this.#take(read);
     const { speech } = this;
-    const { width, em } = this.#size;
-    const { from, to } = this.#span;
     const choices = [...record.tracers, ...record.others];
     const below = choices.includes(this.#below) ? this.#below : (choices[0] ?? '');
-    const lines = (text: string): string[] => textLines(text, width - 4 * em, em);
-    const titles = { upper: lines(`${word(speech, record.rain)}, ${word(speech, record.flow)}, mm`), lower: lines(word(speech, below)) };
-    const frame = frameOf(width, em, from, to, titles);
-    this.#frame = frame;
-    this.#stops = stopsOf(from, to);
+    const { frame, picture, table, summary } = this.#stillOf(record, below);
     const stop = this.#cursor.point;
     const x = stop === null || stop >= this.#stops.length ? null : frame.x(this.#stops[stop]!);
-    const total = (name: string): string => {
-      let sum = 0;
-      for (let step = from; step < to; step++) sum += (record.value(name, step) ?? 0) * record.stepDays;
-      return number(speech.tag, { maximumFractionDigits: 0 }).format(sum);
-    };
     return chartFrame({
       name: speech.say('forcing.picture'),
-      summary: speech.say('forcing.summary', {
-        from: dayOf(speech, record, from, 'UTC'),
-        to: dayOf(speech, record, to - 1, 'UTC'),
-        rain: total(record.rain),
-        flow: total(record.flow),
-      }),
+      summary,
       buttons: html`<span role="group" class="buttons bare" aria-label=${speech.say('history.below')}
           >${choices.map(
             (name) =>
@@ -73,7 +57,7 @@ export class RecordPlot {
           )}</span
         >${zoomButtons(speech, this.#span, record.steps, (span) => this.#set(() => (this.#span = span)))}`,
       picture: html`${svg`<svg viewBox="0 0 ${frame.width} ${frame.height}" aria-hidden="true" focusable="false">
-        ${this.#panels(record, frame, below, titles)}
+        ${picture}
         ${x === null ? '' : svg`<line class="cursor" x1=${x} x2=${x} y1=${frame.upper.top} y2=${frame.lower.bottom} />`}
       </svg>`}`,
       readout:
@@ -82,10 +66,41 @@ export class RecordPlot {
           : this.#readAt(stop),
       cursor: this.#cursor,
       onPointerMove: this.#pointer,
-      table: this.#table.render({ caption: speech.say('forcing.picture'), ...this.#rows(record) }),
+      table: this.#table.render({ caption: speech.say('forcing.picture'), ...table }),
       showsTable: this.#showsTable,
       onToggleTable: () => this.#set(() => (this.#showsTable = !this.#showsTable)),
       say: (key) => speech.say(key),
+    });
+  }
+
+  /** What the cursor does not change, kept between its moves. */
+  #stillOf(record: RecordShown, below: string): Still {
+    const { speech } = this;
+    const { width, em } = this.#size;
+    const { from, to } = this.#span;
+    const made = [record, below, width, em, from, to, speech.tag];
+    if (this.#still?.from.every((part, index) => part === made[index])) return this.#still;
+    const lines = (text: string): string[] => textLines(text, width - 4 * em, em);
+    const upper = lines(`${word(speech, record.rain)} · ${word(speech, record.flow)} (mm)`);
+    const titles = { upper, lower: lines(`${word(speech, below)}${record.unit(below)}`) };
+    const frame = frameOf(width, em, from, to, titles);
+    this.#stops = stopsOf(from, to);
+    const total = (name: string): string => {
+      let sum = 0;
+      for (let step = from; step < to; step++) sum += (record.value(name, step) ?? 0) * record.stepDays;
+      return number(speech.tag, { maximumFractionDigits: 0 }).format(sum);
+    };
+    return (this.#still = {
+      from: made,
+      frame,
+      picture: this.#panels(record, frame, below, titles),
+      table: this.#rows(record),
+      summary: speech.say('forcing.summary', {
+        from: dayOf(speech, record, from, 'UTC'),
+        to: dayOf(speech, record, to - 1, 'UTC'),
+        rain: total(record.rain),
+        flow: total(record.flow),
+      }),
     });
   }
 
@@ -185,8 +200,7 @@ export class RecordPlot {
   }
 
   #readAt(stop: number): string {
-    if (!this.#record) return '';
-    const { columns, rows } = this.#rows(this.#record);
+    const { columns, rows } = this.#still?.table ?? { columns: [], rows: [] };
     const [day, ...values] = rows[stop] ?? [];
     return `${day ?? ''}. ${values.flatMap((value, index) => (value === '–' ? [] : [`${columns[index + 1]}: ${value}`])).join('; ')}`;
   }
@@ -199,12 +213,21 @@ export class RecordPlot {
 
   #pointer = (event: PointerEvent): void => {
     const box = this.host.shadowRoot?.querySelector('.picture > svg')?.getBoundingClientRect();
-    const frame = this.#frame;
+    const frame = this.#still?.frame;
     if (!box?.width || !frame) return;
     const step = frame.stepAt(((event.clientX - box.left) / box.width) * frame.width);
     const stride = (this.#stops[1] ?? 1) - (this.#stops[0] ?? 0) || 1;
     this.#cursor.show(Math.max(0, Math.min(this.#stops.length - 1, Math.round((step - frame.from) / stride))));
   };
+}
+
+interface Still {
+  /** What it was made from. */
+  from: unknown[];
+  frame: Frame;
+  picture: TemplateResult;
+  table: { columns: string[]; rows: string[][] };
+  summary: string;
 }
 
 // Of the upper panel's height; between them stays a little air, however much it rains.

@@ -1,6 +1,7 @@
 import type { ForcingRead, Sample } from '@rillage/sdk';
 import type { Spaced } from '../rillage-age-history/frame.js';
 import { msPerDay } from '../shared/format.js';
+import { cleanText } from '../shared/text.js';
 
 type Series = (number | null)[];
 
@@ -17,6 +18,8 @@ export interface RecordShown extends Spaced {
   line: (name: string) => Series;
   /** Of a series: all values, those that a rule filled too. */
   value: (name: string, step: number) => number | undefined;
+  /** ` (mg/L)`; empty where the record does not say. */
+  unit: (name: string) => string;
   /** 1 where a rule filled. */
   filled: (name: string) => Uint8Array | undefined;
   /** The stream's samples of a tracer by step, the last where a step has several. */
@@ -57,6 +60,11 @@ export function shownRecord({ forcing, record, filled, samples, rainSamples }: F
       return line;
     },
     value: (name, step) => valuesOf(name)?.[step],
+    unit(name) {
+      const sample = [...samples, ...rainSamples].find(({ tracer }) => tracer === name);
+      const unit = sample?.unit ?? (Object.hasOwn(outflows, name) ? 'mm' : /^t(min|max|mean)$/.test(name) ? '°C' : '');
+      return unit && ` (${cleanText(unit, 20)})`;
+    },
     filled: (name) => filled.get(name),
     bottles: (tracer) =>
       new Map(

@@ -1,5 +1,5 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
-import type { Finding, Forcing, ForcingRead, Issue, Layout, LayoutGuess, Receipt, Sample } from '@rillage/sdk';
+import type { Finding, Forcing, ForcingRead, Issue, Layout, LayoutGuess, Receipt, Sample, SourceLayout } from '@rillage/sdk';
 import { ageHistoryStyles } from '../rillage-age-history/styles.js';
 import { buttonStyles } from '../shared/buttons.js';
 import { frameStyles } from '../shared/chart-frame.js';
@@ -17,7 +17,7 @@ import { layoutView } from './layout-view.js';
 import { forcingInputMessages, type ForcingInputKey } from './messages.js';
 import { RecordPlot } from './record-plot.js';
 import { forcingInputStyles } from './styles.js';
-import { lineCount, type ForcingFile } from './text-rows.js';
+import { lineCount, namesOf, type ForcingFile } from './text-rows.js';
 
 /** Detail of `rillage-forcing`: what the reader has confirmed. */
 export interface ForcingDetail {
@@ -124,7 +124,7 @@ export class RillageForcingInput extends LitElement {
     this.proposed = [];
     this.problems = [];
     this.read = null;
-    this.pen = { file: 0, row: 1, position: 1 };
+    this.pen = { file: 0, row: 0, position: 1 };
     this.said = '';
     this.busy = false;
   }
@@ -158,6 +158,7 @@ export class RillageForcingInput extends LitElement {
                 this.#language,
                 files,
                 settled,
+                !read,
                 (index) => {
                   const own = this.proposed.filter(
                     ({ where, severity }) => severity === 'warning' && fileOf(where, this.#names()) === index,
@@ -225,7 +226,7 @@ export class RillageForcingInput extends LitElement {
 
   #found({ findings }: ForcingRead): TemplateResult {
     const all = findings.map(ofFinding);
-    return html`<h3>${this.#say('forcing.findings')}</h3>
+    return html`<h3 id="found" tabindex="-1">${this.#say('forcing.findings')}</h3>
       ${(['stop', 'warning', 'note'] as const).map((severity) => {
         const own = all.filter((remark) => remark.severity === severity);
         return own.length ? this.#remarks(severity, own) : nothing;
@@ -249,7 +250,12 @@ export class RillageForcingInput extends LitElement {
   /** What findings call the sources. */
   #names = (): string[] => this.files.map(({ name }, index) => this.layout?.sources[index]?.name || name);
 
-  #focus = (id: string): void => this.renderRoot.querySelector<HTMLElement>(`#${id}`)?.focus();
+  #focus = (id: string): void => {
+    const found = this.renderRoot.querySelector<HTMLElement>(`#${id}`);
+    const folded = found?.closest('details');
+    if (folded) folded.open = true;
+    found?.focus();
+  };
 
   #beginEdit = (file: number, row: number, where: string): void => {
     this.pen = { file, row, position: this.layout ? positionOf(this.layout, file, where) : 1 };
@@ -289,7 +295,7 @@ export class RillageForcingInput extends LitElement {
       () => guess(files),
       ({ layout: proposed, findings }) => {
         this.proposed = findings.map(ofFinding);
-        this.#change(mergeLayouts(this.layout, proposed, names));
+        this.#change(mergeLayouts(this.layout, { ...proposed, sources: proposed.sources.map(withColumns(files)) }, names));
       },
     );
   }
@@ -299,11 +305,12 @@ export class RillageForcingInput extends LitElement {
     if (!layout || !readForcing) return;
     this.read = null;
     this.problems = [];
+    this.said = '';
     void this.#work(
       () => readForcing(files, layout),
       (read) => {
         this.read = { read, files, layout };
-        this.said = `${this.#say('forcing.findings')}: ${read.findings.length}`;
+        void this.updateComplete.then(() => this.#focus('found'));
       },
     );
   };
@@ -312,7 +319,6 @@ export class RillageForcingInput extends LitElement {
   async #work<Answer>(call: () => Answer | Promise<Answer>, take: (answer: Answer) => void): Promise<void> {
     const run = ++this.#run;
     this.busy = true;
-    this.said = '';
     // So that the page says that work goes on before a call that does not give way begins.
     await new Promise((painted) => setTimeout(painted, 0));
     try {
@@ -395,6 +401,14 @@ export class RillageForcingInput extends LitElement {
     if (all.length > this.files.length && all.length <= mostFiles) this.files = all;
   }
 }
+
+/** Where no column says when, nothing is proposed of the others: they are listed by the first row, for the reader to say. */
+const withColumns =
+  (files: readonly ForcingFile[]) =>
+  (source: SourceLayout, index: number): SourceLayout =>
+    source.columns.length
+      ? source
+      : { ...source, columns: namesOf(files[index]!, source).map((name, at) => ({ position: at + 1, name, holds: 'ignored' })) };
 
 function givenIn(event: SubmitEvent): HTMLInputElement {
   event.preventDefault();

@@ -20,6 +20,12 @@ export const forcingInputStyles = css`
   legend {
     font-weight: 600;
   }
+  h4 {
+    margin-block-start: 0.75rem;
+  }
+  h3:focus {
+    outline: none;
+  }
   p {
     margin-block: 0.5em;
     max-inline-size: 68ch;
@@ -64,8 +70,8 @@ export const forcingInputStyles = css`
     margin-block-start: 0.5rem;
   }
   .fields {
-    display: flex;
-    flex-wrap: wrap;
+    display: grid;
+    grid-template-columns: repeat(auto-fill, minmax(min(100%, 9.5rem), 1fr));
     align-items: end;
     gap: 0.5rem 1.25rem;
     margin-block: 0.5rem;
@@ -73,11 +79,15 @@ export const forcingInputStyles = css`
   .field {
     display: block;
     font-size: var(--_size-1);
-    flex: 0 1 11rem;
     min-inline-size: 0;
   }
   .wide {
-    flex-basis: 24rem;
+    grid-column: span 2;
+  }
+  @container (max-width: 24rem) {
+    .wide {
+      grid-column: auto;
+    }
   }
   .field.open {
     border-inline-start: 4px solid var(--_ink);
@@ -187,6 +197,14 @@ export const forcingInputStyles = css`
     overflow-x: auto;
     font-size: var(--_size-1);
     line-height: 1.4;
+  }
+  section > details {
+    border-block-start: 1px solid var(--_hairline);
+    margin-block-start: 0.75rem;
+    padding-block-start: 0.5rem;
+  }
+  section > details > summary {
+    font-weight: 600;
   }
   summary {
     min-block-size: 24px;

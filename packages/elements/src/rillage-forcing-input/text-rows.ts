@@ -32,6 +32,23 @@ export function cellsAt(file: ForcingFile, line: number, splitAt = ',', remarkMa
   }
 }
 
+/** How a file's rows are told apart, as its layout says. */
+interface RowRules {
+  splitAt?: string;
+  remarkMark?: string;
+  namesRow?: number;
+}
+
+/** The cells of the names row, which a layout counts without remarks and blank lines; empty where there is none. */
+export function namesOf(file: ForcingFile, { splitAt, remarkMark, namesRow = 1 }: RowRules): string[] {
+  let row = 0;
+  for (let line = 1; line <= Math.min(lineCount(file), mostHead) && namesRow > 0; line++) {
+    const cells = cellsAt(file, line, splitAt, remarkMark);
+    if (cells && ++row === namesRow) return cells;
+  }
+  return [];
+}
+
 /** What follows a line's beginning, as far as a row is looked at. */
 function from(file: ForcingFile, line: number): string {
   const { text, starts } = known(file);
@@ -64,3 +81,5 @@ const files = new WeakMap<ForcingFile, { text: string; starts: number[] }>();
 // A longer row is quoted and cut.
 const mostRow = 20_000;
 const mostCells = 1000;
+// Description above the names is seldom longer.
+const mostHead = 500;
