@@ -8,3 +8,5 @@ export type { FitChoices, FitRecord } from './rillage-fit-panel/proposal.js';
 export { RillageExplorer, type ExploreDetail, type ExploreRequest } from './rillage-explorer/rillage-explorer.js';
 export type { ExploreResult } from './rillage-explorer/hand-out.js';
 export type { SectionData, SectionDataColumn } from './rillage-column-view/section-type.js';
+export { RillageForcingInput, type ForcingDetail, type LayoutDetail } from './rillage-forcing-input/rillage-forcing-input.js';
+export type { ForcingFile } from './rillage-forcing-input/text-rows.js';

@@ -4,6 +4,7 @@ import './rillage-age-plot/define.js';
 import './rillage-column-view/define.js';
 import './rillage-explorer/define.js';
 import './rillage-fit-panel/define.js';
+import './rillage-forcing-input/define.js';
 import './rillage-reading/define.js';
 import './rillage-station/define.js';
 

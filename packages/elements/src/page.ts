@@ -4,6 +4,7 @@ import {
   RillageColumnView,
   RillageExplorer,
   RillageFitPanel,
+  RillageForcingInput,
   RillageReading,
   RillageStation,
 } from './classes.js';
@@ -36,6 +37,7 @@ const elements = {
   'column-view': RillageColumnView,
   explorer: RillageExplorer,
   'fit-panel': RillageFitPanel,
+  'forcing-input': RillageForcingInput,
   reading: RillageReading,
   station: RillageStation,
 };

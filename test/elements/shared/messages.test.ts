@@ -8,6 +8,7 @@ import { columnViewMessages } from '../../../packages/elements/src/rillage-colum
 import { explorerMessages } from '../../../packages/elements/src/rillage-explorer/messages.js';
 import { composeMessages } from '../../../packages/elements/src/rillage-reading/compose-messages.js';
 import { detailsMessages } from '../../../packages/elements/src/rillage-reading/details-messages.js';
+import { forcingInputMessages } from '../../../packages/elements/src/rillage-forcing-input/messages.js';
 import { readingMessages } from '../../../packages/elements/src/rillage-reading/messages.js';
 import { stationMessages } from '../../../packages/elements/src/rillage-station/messages.js';
 import { fill, type Message, type Messages } from '../../../packages/elements/src/shared/messages.js';
@@ -17,6 +18,7 @@ const english: Messages = {
   ...ageHistoryMessages,
   ...columnViewMessages,
   ...explorerMessages,
+  ...forcingInputMessages,
   ...agePlotMessages,
   ...composeMessages,
   ...detailsMessages,

@@ -1,5 +1,6 @@
 import type { Messages } from '../shared/messages.js';
 import { fit } from './ar-fit.js';
+import { forcingInput } from './ar-forcing-input.js';
 import { throughTime } from './ar-through-time.js';
 
 /** Arabic, written from right to left. */
@@ -152,4 +153,5 @@ export const messages: Messages = {
 
   ...fit,
   ...throughTime,
+  ...forcingInput,
 };

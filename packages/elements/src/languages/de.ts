@@ -1,5 +1,6 @@
 import type { Messages } from '../shared/messages.js';
 import { fit } from './de-fit.js';
+import { forcingInput } from './de-forcing-input.js';
 import { throughTime } from './de-through-time.js';
 
 /** German. */
@@ -157,4 +158,5 @@ export const messages: Messages = {
 
   ...fit,
   ...throughTime,
+  ...forcingInput,
 };

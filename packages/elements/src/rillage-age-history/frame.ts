@@ -37,11 +37,13 @@ export function frameOf(width: number, em: number, from: number, to: number, tit
   };
 }
 
-/** ms since 1970 at a step's end. */
-export const endOf = (history: StationHistory, step: number): number =>
-  Date.parse(history.start) + (step + 1) * history.stepDays * msPerDay;
+/** Steps in time: the beginning of the first and their length. */
+export type Spaced = Pick<StationHistory, 'start' | 'stepDays'>;
 
-export const stepAtTime = (history: StationHistory, time: number): number =>
+/** ms since 1970 at a step's end. */
+export const endOf = (history: Spaced, step: number): number => Date.parse(history.start) + (step + 1) * history.stepDays * msPerDay;
+
+export const stepAtTime = (history: Spaced, time: number): number =>
   Math.round((time - Date.parse(history.start)) / (history.stepDays * msPerDay)) - 1;
 
 /** A span of steps, first and one past the last. */

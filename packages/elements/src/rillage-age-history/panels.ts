@@ -4,7 +4,7 @@ import { number } from '../shared/format.js';
 import type { Language } from '../shared/language.js';
 import { linesAt } from '../shared/text-lines.js';
 import { timeMarks } from '../shared/time-axis.js';
-import { endOf, stepAtTime, type Frame } from './frame.js';
+import { endOf, stepAtTime, type Frame, type Spaced } from './frame.js';
 import { hatchBetween } from './hatch-between.js';
 import type { AgeHistoryKey } from './messages.js';
 import { bandsOf, stepsToDraw, type Piece } from './stack.js';
@@ -81,7 +81,13 @@ export function medianPanel(history: StationHistory, frame: Frame, marks: { days
 }
 
 /** A tracer in the stream: simulated as a line, bottles as circles with their stated error; a detection limit as a stroke that points away. */
-export function tracerPanel(history: StationHistory, frame: Frame, tracer: string, samples: Sample[], speech: Speech): TemplateResult {
+export function tracerPanel(
+  history: Spaced & Pick<StationHistory, 'concentration'>,
+  frame: Frame,
+  tracer: string,
+  samples: Sample[],
+  speech: Speech,
+): TemplateResult {
   const { lower, left, right, em, from, to } = frame;
   const values = history.concentration[tracer] ?? [];
   const steps = stepsToDraw(values, from, to, Math.max(1, Math.round(right - left)));
@@ -109,14 +115,18 @@ export function tracerPanel(history: StationHistory, frame: Frame, tracer: strin
     })}`;
 }
 
-/** Lines and words around both panels. */
+/**
+ * Lines and words around both panels.
+ * @param mostFlow  value at the upper panel's top; `ticksTo` bounds its marks
+ */
 export function axesOf(
-  history: StationHistory,
+  history: Spaced,
   frame: Frame,
   speech: Speech,
   mostFlow: number,
   titles: { upper: string[]; lower: string[] },
   asShares: boolean,
+  ticksTo = mostFlow,
 ): TemplateResult {
   const { em, left, right, upper, lower } = frame;
   const [begins, ends] = [endOf(history, frame.from - 1), endOf(history, frame.to - 1)];
@@ -125,7 +135,7 @@ export function axesOf(
   return svg`
     ${linesAt(titles.upper, titles.upper.length > 1 ? 0 : left, upper.top - 0.6 * em, em, true)}
     ${linesAt(titles.lower, titles.lower.length > 1 ? 0 : left, lower.top - 0.6 * em, em, true)}
-    ${ticks(0, mostFlow).map(
+    ${ticks(0, ticksTo).map(
       (value) => svg`<line class="tick" x1=${left - 0.4 * em} x2=${left} y1=${y(value)} y2=${y(value)} />
         <text class="end" x=${left - 0.6 * em} y=${y(value) + 0.35 * em}>${format.format(value)}</text>`,
     )}
@@ -146,7 +156,7 @@ export function axesOf(
   `;
 }
 
-const point = (x: number, y: number): string => `${x.toFixed(1)} ${y.toFixed(1)}`;
+export const point = (x: number, y: number): string => `${x.toFixed(1)} ${y.toFixed(1)}`;
 
 /** About four round values between two. */
 export function ticks(low: number, high: number): number[] {
@@ -159,7 +169,7 @@ export function ticks(low: number, high: number): number[] {
 }
 
 /** Runs of steps that hold, without those that do not. */
-function unbroken(steps: number[], holds: (step: number) => boolean): number[][] {
+export function unbroken(steps: number[], holds: (step: number) => boolean): number[][] {
   const runs: number[][] = [];
   let open = false;
   for (const step of steps) {

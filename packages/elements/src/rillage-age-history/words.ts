@@ -2,7 +2,7 @@ import type { Sample, StationHistory } from '@rillage/sdk';
 import { age, ageSpan, date, moment, msPerDay, number, olderThan, percent } from '../shared/format.js';
 import { lazyRows } from '../shared/lazy-rows.js';
 import { cleanText } from '../shared/text.js';
-import { endOf, type Span } from './frame.js';
+import { endOf, type Spaced, type Span } from './frame.js';
 import type { Speech } from './panels.js';
 import { bandsOf, limitsOf, sharesAt, type AgeBand } from './stack.js';
 
@@ -13,7 +13,7 @@ export function bandName(speech: Speech, { from, to }: AgeBand): string {
   return speech.say('history.between', { from: age(speech, from), to: age(speech, to) });
 }
 
-export const dayOf = (speech: Speech, history: StationHistory, step: number, zone: string): string =>
+export const dayOf = (speech: Speech, history: Spaced, step: number, zone: string): string =>
   moment(speech.tag, new Date(endOf(history, step)).toISOString(), history.stepDays, zone);
 
 const flowText = (speech: Speech, flow: number | null | undefined): string =>

@@ -1,7 +1,8 @@
 import type { Reading, Station, StationExcerpt } from '@rillage/sdk';
 import { openCache } from '../shared/storage.js';
 import { checkStation } from '../shared/check/station.js';
-import { byteCap, load, LoadFailure, type LoadProblem } from './load.js';
+import { LoadFailure, type LoadProblem } from '../shared/fetch-bytes.js';
+import { byteCap, load } from './load.js';
 
 export interface SourceProblem {
   code: LoadProblem | 'notStation' | 'newer';

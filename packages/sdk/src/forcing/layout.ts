@@ -61,6 +61,19 @@ export interface SettledSource {
   /** Two rows of one time that differ. */
   repeatedTime: 'refuse' | 'first' | 'last';
   columns: SettledColumn[];
+  /** Cells that stand otherwise than the file has them; applied before anything else reads the cell, each of them a finding. */
+  edits: CellEdit[];
+}
+
+/** One cell that someone has changed, with who or what says so in `why`. The file stays as it is. */
+export interface CellEdit {
+  /** Line in the text at which the row begins, from 1, as findings count. */
+  row: number;
+  /** Column, from 1. */
+  position: number;
+  /** Text that stands in place of the cell. */
+  value: string;
+  why: string;
 }
 
 export interface TimeLayout {
@@ -175,8 +188,10 @@ export type Layout = Partial<Omit<SettledLayout, 'sources' | 'grid' | 'rainConce
   evapotranspiration?: Optional<EvapotranspirationRule, 'method'> | null;
   limits?: Partial<IntakeLimits>;
 };
-export type SourceLayout = Partial<Omit<SettledSource, 'time' | 'columns'>> & {
+export type SourceLayout = Partial<Omit<SettledSource, 'time' | 'columns' | 'edits'>> & {
   time: Optional<TimeLayout, 'columns'>;
   columns: ColumnLayout[];
+  edits?: CellEditLayout[];
 };
+export type CellEditLayout = Optional<CellEdit, 'row' | 'position' | 'value'>;
 export type ColumnLayout = Optional<SettledColumn, 'position' | 'holds'>;

@@ -23,6 +23,8 @@ export interface ForcingRead {
   rainSamples: Sample[];
   /** By name: the series on the forcing's steps as read (`precipitation`, `tmin`, an outflow's name), before snow. */
   record: Map<string, Float64Array>;
+  /** By name, where anything was: 1 in the steps of `record` that a gap rule filled. */
+  filled: Map<string, Uint8Array>;
   /** The snow store's run, where the layout asks for one. */
   snow: SnowRun | null;
   /** By tracer: how rain samples were spread, with the error of each step for a fit. */

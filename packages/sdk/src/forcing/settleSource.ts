@@ -1,4 +1,4 @@
-import type { Holds, SettledColumn, SettledSource, StandsFor, TimeLayout } from './layout.js';
+import type { CellEdit, Holds, SettledColumn, SettledSource, StandsFor, TimeLayout } from './layout.js';
 import type { Taker } from './take.js';
 
 export const HOLDS: readonly Holds[] = [
@@ -31,6 +31,7 @@ const STANDS_FOR: readonly StandsFor[] = [
 ];
 /** Names that plain objects already answer to, which would make a record keyed by them lie. */
 const RESERVED = new Set([...Object.getOwnPropertyNames(Object.prototype), 'prototype']);
+const EDIT_KEYS = new Set(['row', 'position', 'value', 'why']);
 const NAMED: ReadonlySet<Holds> = new Set<Holds>(['outflow', 'rainTracer', 'streamTracer', 'driver']);
 
 /** One source's layout with its defaults. */
@@ -61,7 +62,33 @@ export function settleSource(value: unknown, path: string, take: Taker): Settled
     longRows: take.choice(source['longRows'], `${path}.longRows`, ['refuse', 'skip'], 'refuse'),
     repeatedTime: take.choice(source['repeatedTime'], `${path}.repeatedTime`, ['refuse', 'first', 'last'], 'refuse'),
     columns,
+    edits: settleEdits(source['edits'], `${path}.edits`, take),
   };
+}
+
+/** No cell twice: which of two edits stands must not hang on their order. */
+function settleEdits(value: unknown, path: string, take: Taker): CellEdit[] {
+  const cells = new Set<string>();
+  return take.list(value, path, 1000).map((entry, index) => {
+    const at = `${path}[${index}]`;
+    const edit = take.object(entry, at);
+    for (const key of Object.keys(edit)) {
+      if (!EDIT_KEYS.has(key))
+        take.issues.push({ code: 'layout-invalid', path: `${at}.${key}`, expected: 'row, position, value and why alone' });
+    }
+    for (const key of ['row', 'position', 'value']) {
+      if (edit[key] === undefined)
+        take.issues.push({ code: 'layout-invalid', path: `${at}.${key}`, expected: 'the row, the position and the new text' });
+    }
+    const row = take.whole(edit['row'], `${at}.row`, 1, 1, 100_000_000);
+    const position = take.whole(edit['position'], `${at}.position`, 1, 1, 10_000);
+    const cell = `${row} ${position}`;
+    if (cells.has(cell)) {
+      take.issues.push({ code: 'layout-invalid', path: at, expected: 'one edit a cell', received: `row ${row}, column ${position} again` });
+    }
+    cells.add(cell);
+    return { row, position, value: take.text(edit['value'], `${at}.value`, ''), why: take.text(edit['why'], `${at}.why`, '', 1000) };
+  });
 }
 
 function settleTime(value: unknown, path: string, take: Taker): TimeLayout {

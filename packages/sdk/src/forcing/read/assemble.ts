@@ -20,6 +20,8 @@ export interface Assembled {
   forcing: Forcing;
   /** By name: every series on the forcing's steps, before snow: `precipitation`, `tmin`, … */
   record: Map<string, Float64Array>;
+  /** By name, where anything was: 1 in the steps of `record` that a gap rule filled. */
+  filled: Map<string, Uint8Array>;
   snow: SnowRun | null;
   rainFills: Map<string, RainFill>;
 }
@@ -49,9 +51,12 @@ export function assemble(
     notebook,
   );
   const record = new Map<string, Float64Array>();
+  const filled = new Map<string, Uint8Array>();
   for (const { name, pieces } of merged) {
     const { values, resampled } = ontoGrid(pieces, grid);
     noteResampled(pieces.where, resampled, notebook);
+    const gaps = Uint8Array.from(values, (value) => (Number.isNaN(value) ? 1 : 0));
+    if (gaps.includes(1)) filled.set(name, gaps);
     fillGaps(
       values,
       name,
@@ -62,7 +67,7 @@ export function assemble(
     record.set(name, values);
   }
   notebook.stopIfAny();
-  return complete(merged, record, rainSamples, grid, layout, notebook);
+  return { ...complete(merged, record, rainSamples, grid, layout, notebook), filled };
 }
 
 function complete(
@@ -72,7 +77,7 @@ function complete(
   grid: Grid,
   layout: SettledLayout,
   notebook: Notebook,
-): Assembled {
+): Omit<Assembled, 'filled'> {
   const forcing: Forcing = {
     start: new Date(grid.startMs).toISOString(),
     stepDays: layout.grid.stepDays,

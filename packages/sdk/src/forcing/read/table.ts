@@ -4,6 +4,7 @@ import type { SourceText } from '../text/sources.js';
 import { tokenize, type Row } from '../text/tokenize.js';
 import { daysInMonth } from '../time/pattern.js';
 import { instantReader } from '../time/instants.js';
+import { applyEdits } from './edits.js';
 
 /** One column's cells with the time each belongs to, in the order of time. */
 export interface TimedCells {
@@ -30,6 +31,7 @@ export function readTable(input: SourceText, source: SettledSource, limits: Inta
     maxRows: limits.rows,
     maxColumns: limits.columns,
   });
+  applyEdits(rows, source, notebook);
   const where = source.name;
   if (hadByteOrderMark)
     notebook.note({ code: 'byte-order-mark', severity: 'note', where, seen: 'a byte-order mark before the first cell', done: 'left out' });
