@@ -1,5 +1,6 @@
 import { browser } from './browser.mjs';
 import { docs } from './docs.mjs';
+import { journeys } from './journeys.mjs';
 import { manifest } from './manifest.mjs';
 import { packages } from './packages.mjs';
 import { size } from './size.mjs';
@@ -20,5 +21,6 @@ export const stages = [
   { name: 'docs', run: docs, verify: true },
   { name: 'packages', run: packages },
   { name: 'start', run: start },
+  { name: 'journeys', run: journeys },
   { name: 'browser', run: browser },
 ];

@@ -1,8 +1,7 @@
-import { spawn } from 'node:child_process';
-import { once } from 'node:events';
 import { at } from '../../demo-site/tools/paths.mjs';
 import { contentSecurityPolicy } from '../../demo-site/policy.mjs';
 import { integrityOf } from '../../demo-site/tools/library.mjs';
+import { startSite } from '../journeys/site.mjs';
 import { expectSuccess, runNode } from './tally.mjs';
 
 /** The newcomer's command: prints a reading, serves the pages and says where. */
@@ -15,16 +14,11 @@ export async function start(tally) {
     console.log(printed.trim().replace(/^/gm, '  | '));
   });
   await tally.check('npm start serves the site and says where', async () => {
-    const child = spawn(process.execPath, [at('demo-site/start.mjs')], {
-      cwd: at('.'),
-      env: { ...process.env, PORT: '0' },
-      stdio: ['ignore', 'pipe', 'inherit'],
-    });
+    const site = await startSite();
     try {
-      await checkSite(await addressPrintedBy(child));
+      await checkSite(site.address);
     } finally {
-      child.kill('SIGTERM');
-      if (child.exitCode === null) await once(child, 'exit');
+      await site.stop();
     }
   });
 }
@@ -43,22 +37,4 @@ async function checkSite(address) {
   }
   const told = [...text.matchAll(/src="(?:\.?\/)?lib\/([\w.-]+)"[^>]*integrity="([^"]+)"/g)];
   for (const [, name, hash] of told) if (hashes[name] !== hash) throw new Error(`the page states an old hash of lib/${name}`);
-}
-
-/** The address that the command prints, within a minute. */
-function addressPrintedBy(child) {
-  return new Promise((settle, fail) => {
-    let printed = '';
-    const timer = setTimeout(() => fail(new Error(`no address within a minute:\n${printed}`)), 60_000);
-    const done = (finish) => {
-      clearTimeout(timer);
-      finish();
-    };
-    child.stdout.on('data', (part) => {
-      printed += part;
-      const address = /http:\/\/localhost:\d+\//.exec(printed)?.[0];
-      if (address) done(() => settle(address));
-    });
-    child.once('exit', (status) => done(() => fail(new Error(`it ended with status ${status}:\n${printed}`))));
-  });
 }

@@ -18,8 +18,12 @@ for (const demo of ['reading', 'picture']) {
     });
   }
   // A button inside the element sets its attributes too; the controls follow.
-  station.addEventListener('rillage-view-change', () => {
-    for (const name of ['view', 'scale']) set(part(demo, 'rillage-age-plot'), name, part(demo, 'rillage-age-plot')[name]);
+  station.addEventListener('rillage-view-change', async ({ target }) => {
+    await target.updateComplete;
+    for (const control of document.querySelectorAll(`#demo-${demo} select[data-of="${target.localName}"]`)) {
+      const { sets } = control.dataset;
+      control.value = target.getAttribute(sets) === usual(target, sets) ? '' : target.getAttribute(sets);
+    }
     show();
   });
   show();

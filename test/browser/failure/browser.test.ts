@@ -52,7 +52,7 @@ describe('a browser without', () => {
 
   it('an origin or a network: the reading that the page carries, said not to be the newest', async () => {
     page = framed(station(answering('nothing'), await child()), { sandbox: 'allow-scripts' });
-    await page.shows(sentence, /No connection/);
+    await page.shows(sentence, /the server cannot be reached. Shown is an earlier copy/);
   });
 
   it('a canvas: words and table of every picture', async () => {

@@ -179,7 +179,7 @@ export class RillageStation extends LitElement {
     if (sourced.kind === 'empty') return [];
     const { reading, problem, keptAt } = sourced;
     const notes: string[] = [];
-    if (problem && problem.code === 'unreachable' && reading) {
+    if (problem?.code === 'unreachable' && reading && keptAt) {
       notes.push(
         language.say('station.offline', { date: date(language.tag, keptAt, { dateStyle: 'long', timeStyle: 'short' }, this.timeZone) }),
       );

@@ -12,7 +12,7 @@ export interface SourceProblem {
   status?: number;
 }
 
-/** What is at hand: nothing, nothing yet, or data and, where the newest could not be had, why. */
+/** What is at hand: nothing, nothing yet, or data and, where the newest could not be had, why. `keptAt`: when a copy was fetched, ms; 0 where not known. */
 export type Sourced =
   | { kind: 'empty' }
   | { kind: 'loading' }
@@ -31,7 +31,8 @@ export class StationSource {
   open(given: unknown, src: string | null, child: string | null): void {
     this.close();
     if (given) return this.tell(this.#checked(given));
-    const kept = child ? this.#parsed(child) : null;
+    // When the page was made is not known.
+    const kept = child ? this.#parsed(child, 0) : null;
     if (!src) return this.tell(kept ?? { kind: 'empty' });
     this.tell(kept ?? { kind: 'loading' });
     this.#running = new AbortController();
