@@ -3,6 +3,7 @@ import resolve from '@rollup/plugin-node-resolve';
 import terser from '@rollup/plugin-terser';
 import { languageFile, laterLanguages } from './demo-site/tools/rollup/later-languages.mjs';
 import { lateUplot } from './demo-site/tools/rollup/late-uplot.mjs';
+import { narrowTemplates } from './demo-site/tools/rollup/narrow-templates.mjs';
 import { ownPolicy } from './demo-site/tools/rollup/own-policy.mjs';
 import { at, filesUnder } from './demo-site/tools/paths.mjs';
 import { lines } from './demo-site/tools/rollup/lines.mjs';
@@ -57,6 +58,7 @@ export function optionsFor({ input, from, code, file }) {
       lateUplot(),
       resolve({ browser: true, exportConditions: ['browser', 'production'] }),
       small(),
+      from?.includes('elements') ? narrowTemplates() : null,
     ],
     output: { file, format: 'es', inlineDynamicImports: true, sourcemap: false, banner },
     // A warning here is an unresolved import or a circle: a defect of the build, not a remark.

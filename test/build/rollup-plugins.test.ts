@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import resolve from '@rollup/plugin-node-resolve';
 import { lateUplot } from '../../demo-site/tools/rollup/late-uplot.mjs';
 import { lines } from '../../demo-site/tools/rollup/lines.mjs';
+import { narrowTemplates } from '../../demo-site/tools/rollup/narrow-templates.mjs';
 import { ownPolicy } from '../../demo-site/tools/rollup/own-policy.mjs';
 import { at } from '../../demo-site/tools/paths.mjs';
 
@@ -66,5 +67,12 @@ describe('lateUplot', () => {
 
   it('fails the build where uPlot is imported statically', async () => {
     await expect(bundle("export { default } from 'uplot';", plugins())).rejects.toThrow('imports uplot statically');
+  });
+});
+
+describe('narrowTemplates', () => {
+  it('takes indentation out of templates, and leaves their lines and blanks', async () => {
+    const code = await bundle('export const css = `a {\n      b: c  d;\n    }`;', [narrowTemplates()]);
+    expect(code).toContain('`a {\nb: c  d;\n}`');
   });
 });

@@ -31,7 +31,9 @@ describe('define()', () => {
   });
 
   it('defineAll({ prefix }) defines all under another prefix, working among themselves', async () => {
-    const tags = ['age-history', 'age-plot', 'column-view', 'explorer', 'reading', 'station'].map((name) => `agency-${name}`);
+    const tags = ['age-history', 'age-plot', 'column-view', 'explorer', 'forcing-input', 'reading', 'station'].map(
+      (name) => `agency-${name}`,
+    );
     expect(defineAll({ prefix: 'agency' })).to.deep.equal(tags);
     const station = Object.assign(document.createElement('agency-station'), { station: (await parts()).station });
     const reading = document.createElement('agency-reading');

@@ -145,6 +145,8 @@ export class RillageForcingInput extends LitElement {
     const say = this.#say;
     const settled = files.length > 0 && layout?.sources.length === files.length ? layout : null;
     const current = read?.layout === layout && read?.files === files;
+    // Nobody has a value to change before something was said of one.
+    const edits = read || this.problems.length || settled?.sources.some((source) => source.edits?.length) ? settled : null;
     return html`<div lang=${this.#language.tag} dir=${this.#language.direction} aria-busy=${this.busy}>
       <h2 part="name">${say('forcing.name')}</h2>
       ${this.#sources()}
@@ -177,7 +179,7 @@ export class RillageForcingInput extends LitElement {
           : nothing
       }
       ${read ? html`<section>${this.#found(read.read)}</section>` : nothing}
-      ${settled ? html`<section>${editView(this.#language, files, settled, this.pen, (pen) => (this.pen = pen), this.#change)}</section>` : nothing}
+      ${edits ? html`<section>${editView(this.#language, files, edits, this.pen, (pen) => (this.pen = pen), this.#change)}</section>` : nothing}
       ${
         read
           ? html`<section>
