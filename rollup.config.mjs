@@ -19,7 +19,8 @@ export function bundles() {
   return [
     { name: 'sdk', input: at('packages/sdk/dist/index.js'), file: at('packages/sdk/dist/rillage-sdk.min.js') },
     { name: 'worker', input: at('packages/sdk/dist/workers/worker-entry.js'), file: at('packages/sdk/dist/workers/rillage-worker.min.js') },
-    elementBundle('rillage-elements', every, "export * from './index.js';"),
+    elementBundle('rillage-elements', every.filter(isForReaders), readersExports),
+    elementBundle('rillage-desk', every, "export * from './index.js';"),
     elementBundle(
       'rillage-reading',
       every.filter((path) => /rillage-(station|reading)[\\/]/.test(path)),
@@ -31,6 +32,10 @@ export function bundles() {
     })),
   ].filter((bundle) => (bundle.needs ?? [bundle.input]).every((path) => existsSync(path)));
 }
+
+/** Elements that a portal shows; the others are the hydrologist's, and only the desk's file carries them. */
+export const isForReaders = (path) => !/rillage-(forcing-input|fit-panel)[\\/]/.test(path);
+export const readersExports = "export * from './classes.js'; export * from './page.js'; export * from './version.js';";
 
 /** Languages that ship beside English. */
 const languages = ['ar', 'de'];

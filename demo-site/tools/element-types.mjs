@@ -41,7 +41,7 @@ function vue(elements) {
   ].join('\n');
 }
 
-const importOf = (elements) => `import type { ${elements.map((element) => element.name).join(', ')} } from '../dist/classes.js';`;
+const importOf = (elements) => `import type { ${elements.map((element) => element.name).join(', ')} } from '../dist/index.js';`;
 
 const common = `interface Common {
   id?: string;

