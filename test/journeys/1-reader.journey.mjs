@@ -86,6 +86,17 @@ export async function walk({ tally, site, browser }) {
   });
   await plain.close();
 
+  for (const path of ['', 'stations/thessle-brook.html', 'stations/tessen-sike.html', 'embed.html']) {
+    const read = await browser.open(new URL(path, site.address).href);
+    await tally.check(`axe finds nothing wrong with ${path || 'the list'}, by day and by night`, async () => {
+      for (const value of ['light', 'dark']) {
+        await read.page.emulateMediaFeatures([{ name: 'prefers-color-scheme', value }]);
+        await read.expectAccessible();
+      }
+    });
+    await read.close();
+  }
+
   const phone = await browser.open(site.address, { width: 320 });
   await tally.check('nothing is wider than a phone of 320 px', async () => {
     await phone.until(escaped(sentence));

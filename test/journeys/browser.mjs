@@ -1,7 +1,8 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import puppeteer from 'puppeteer-core';
+import { at } from '../../demo-site/tools/paths.mjs';
 import { ensureEngine } from '../browser/config/find.mjs';
 
 const quiet = ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-sync'];
@@ -26,7 +27,8 @@ export async function openBrowser() {
 /**
  * A page of a new visitor: nothing kept, nothing known.
  * @param options `scripts: false` for a browser without them; `width`, px
- * @returns `page` (puppeteer's), `response`, `complaints` (errors, refused rules, failed requests), `shown()`, `until()`, `close()`
+ * @returns `page` (puppeteer's), `response`, `complaints` (errors, refused rules, failed requests), `shown()`, `until()`,
+ *          `expectAccessible()`, `close()`
  */
 async function openPage(browser, url, { scripts = true, width = 1100 } = {}) {
   const context = await browser.createBrowserContext();
@@ -57,7 +59,26 @@ async function openPage(browser, url, { scripts = true, width = 1100 } = {}) {
       await new Promise((done) => setTimeout(done, 50));
     }
   };
-  return { page, response, complaints, elsewhere, shown, until, close: () => context.close() };
+  return {
+    page,
+    response,
+    complaints,
+    elsewhere,
+    shown,
+    until,
+    expectAccessible: () => expectAccessible(page),
+    close: () => context.close(),
+  };
+}
+
+/** Fails where axe finds anything wrong with the page, shadow trees included: WCAG 2.2 A and AA and good practice. The policy does not bind the protocol. */
+async function expectAccessible(page) {
+  await page.evaluate(readFileSync(at('node_modules/axe-core/axe.min.js'), 'utf8'));
+  const found = await page.evaluate(async () => {
+    const { violations } = await globalThis.axe.run(document, { resultTypes: ['violations'] });
+    return violations.map(({ id, help, nodes }) => `${id}: ${help}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`);
+  });
+  if (found.length > 0) throw new Error(found.join('\n'));
 }
 
 /** Runs in the page: the text a reader sees, through shadow trees and slots. */
