@@ -71,7 +71,7 @@ export const forcingInputStyles = css`
   }
   .fields {
     display: grid;
-    grid-template-columns: repeat(auto-fill, minmax(min(100%, 9.5rem), 1fr));
+    grid-template-columns: repeat(auto-fill, minmax(min(100%, 10.5rem), 1fr));
     align-items: end;
     gap: 0.5rem 1.25rem;
     margin-block: 0.5rem;
@@ -84,7 +84,10 @@ export const forcingInputStyles = css`
   .wide {
     grid-column: span 2;
   }
-  @container (max-width: 24rem) {
+  @container (max-width: 30rem) {
+    .fields {
+      grid-template-columns: repeat(auto-fill, minmax(min(100%, 8rem), 1fr));
+    }
     .wide {
       grid-column: auto;
     }
