@@ -4,7 +4,8 @@ import { readStation } from '@rillage/sdk';
 import { writeRecordFile } from './build-section.mjs';
 import { writeFittedStationFile } from './fitted-station.mjs';
 import { writeFurtherStationFiles } from './further-stations.mjs';
-import { publishStation } from './publish.mjs';
+import { publishAgencyFiles, publishStation } from './publish.mjs';
+import { recordFiles } from './thessle-brook.mjs';
 
 const WIDTH = 78;
 
@@ -15,6 +16,7 @@ const file = await writeFittedStationFile();
 const station = readStation(await readFile(file, 'utf8'));
 await publishStation(station, file);
 await writeFurtherStationFiles();
+await publishAgencyFiles(recordFiles, new URL('../data/thessle-brook/', import.meta.url), new URL('files/', file));
 
 const { name, reading } = station;
 const percent = (share) => `${(100 * share).toFixed(1)} %`;

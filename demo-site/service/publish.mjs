@@ -1,4 +1,4 @@
-import { writeFile } from 'node:fs/promises';
+import { copyFile, mkdir, writeFile } from 'node:fs/promises';
 import { makeExcerpt, writeExcerpt, writeReading } from '@rillage/sdk';
 
 /**
@@ -10,4 +10,10 @@ import { makeExcerpt, writeExcerpt, writeReading } from '@rillage/sdk';
 export async function publishStation(station, folder) {
   await writeFile(new URL(`${station.id}-public.json`, folder), writeExcerpt(makeExcerpt(station)));
   await writeFile(new URL(`${station.id}-reading.json`, folder), writeReading(station.reading));
+}
+
+/** The invented agency's own files, for whoever tries the desk. */
+export async function publishAgencyFiles(names, from, folder) {
+  await mkdir(folder, { recursive: true });
+  for (const name of names) await copyFile(new URL(name, from), new URL(name, folder));
 }
