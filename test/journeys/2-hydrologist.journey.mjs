@@ -5,10 +5,10 @@ import { readStation, writeStation } from '@rillage/sdk';
 
 export const title = 'A hydrologist takes an agency’s files to a signed station file at the desk';
 
-const PATIENCE_MILLISECONDS = 240_000;
+const PATIENCE_MILLISECONDS = 400_000;
 
 /**
- * The invented agency's files at the desk: settled, read, mended, fitted, kept through a reload, signed off, saved. The last two years, one tracer and
+ * The invented agency's files at the desk: settled, read, mended, fitted, kept through a reload, signed off, saved. Two years, one tracer and
  * one selection under narrow priors, so that the fit ends within the patience of a test.
  */
 export async function walk({ tally, site, browser }) {
@@ -31,8 +31,8 @@ export async function walk({ tally, site, browser }) {
     await hand('fill', '#intake', /^Zone of the clock/, 'UTC');
     await hand('fill', '#intake', /^Catchment area/, '23.4');
     await hand('fill', '#intake', /^Latitude/, '51.3');
-    await hand('fill', '#intake', /^First day/, '2023-04-01');
-    await hand('fill', '#intake', /^Ends before/, '2025-04-01');
+    await hand('fill', '#intake', /^First day/, '2022-04-01');
+    await hand('fill', '#intake', /^Ends before/, '2024-04-01');
     await hand('fill', '#intake', /^times$/, '0.66');
     await desk.until(/Nothing is open/, '#intake');
   });
@@ -82,7 +82,7 @@ export async function walk({ tally, site, browser }) {
         throw new Error(
           `no verdict for ${unknown}: ${text.slice(text.indexOf('What the samples say'), text.indexOf('What the samples say') + 900)}`,
         );
-    if (!/d18O: \d+ of 1\d\d samples lie in their 5 to 95 % range/.test(text)) throw new Error('no word of the samples');
+    if (!/d18O: \d+ of \d+ samples lie in their 5 to 95 % range/.test(text)) throw new Error('no word of the samples');
   });
   await tally.check('signed by name and date, the station stands as the public will read it', async () => {
     await hand('fill', '#panel', /^Name$/, 'A. Hydrologist (invented)');
@@ -97,9 +97,9 @@ export async function walk({ tally, site, browser }) {
     if (writeStation(station) !== saved) throw new Error('it does not write back as it was');
   });
   await tally.check('nothing was complained of, and nothing asked for elsewhere', () => {
-    const real = desk.complaints.filter((words) => !/blob:/.test(words));
-    if (real.length + desk.elsewhere.filter((url) => !url.startsWith('blob:')).length > 0)
-      throw new Error([...real, ...desk.elsewhere].join('\n'));
+    // the saved file has an address of the page's own, a date field its browser's picture
+    const fetched = desk.elsewhere.filter((url) => !/^(blob|data):/.test(url));
+    if (desk.complaints.length + fetched.length > 0) throw new Error([...desk.complaints, ...fetched].join('\n'));
   });
   await desk.close();
 }
