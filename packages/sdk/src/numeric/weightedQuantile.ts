@@ -11,18 +11,26 @@
  * @source own extension of Hyndman and Fan's type 7 to weights
  */
 export function weightedQuantile(values: ArrayLike<number>, weights: ArrayLike<number>, p: number): number {
-  if (!(p >= 0 && p <= 1)) return NaN;
+  return weightedQuantiles(values, weights, [p])[0];
+}
+
+/** Several of them, for one sorting. @returns [p] */
+export function weightedQuantiles(values: ArrayLike<number>, weights: ArrayLike<number>, ps: readonly number[]): number[] {
   const order: number[] = [];
   for (let i = 0; i < values.length; i++) {
     if (weights[i] === 0) continue;
-    if (!(weights[i] > 0) || values[i] !== values[i]) return NaN;
+    if (!(weights[i] > 0) || values[i] !== values[i]) return ps.map(() => NaN);
     order.push(i);
   }
-  if (order.length === 0) return NaN;
+  if (order.length === 0) return ps.map(() => NaN);
   order.sort((i, j) => values[i] - values[j]);
   let span = 0;
   for (let k = 1; k < order.length; k++) span += weights[order[k - 1]] + weights[order[k]];
-  let left = p * span;
+  return ps.map((p) => (p >= 0 && p <= 1 ? along(p * span, order, values, weights) : NaN));
+}
+
+/** The value at which the cumulated weight of sorted values reaches `left`. */
+function along(left: number, order: readonly number[], values: ArrayLike<number>, weights: ArrayLike<number>): number {
   for (let k = 1; k < order.length; k++) {
     const from = values[order[k - 1]];
     const to = values[order[k]];

@@ -1,6 +1,6 @@
 import { type AgeDistribution, type DistributionWithRange } from '../contract.js';
 import { type Members } from './members.js';
-import { overMembers } from './overMembers.js';
+import { overMembers, rangeOverMembers } from './overMembers.js';
 import { stepEnd } from './readingTime.js';
 
 /** Points kept of a distribution: enough for any picture, few enough for a file. */
@@ -25,10 +25,7 @@ export function distributionAt(members: Members, step: number): DistributionWith
   const values = new Float64Array(kept.length);
   ageDays.forEach((age, i) => {
     kept.forEach((distribution, m) => (values[m] = shareAt(distribution, age)));
-    middle[i] = overMembers(values, weights, 0.5);
-    if (!assessed) return;
-    low[i] = overMembers(values, weights, 0.05);
-    high[i] = overMembers(values, weights, 0.95);
+    [low[i], middle[i], high[i]] = rangeOverMembers(values, weights);
   });
   return {
     of: members.of,

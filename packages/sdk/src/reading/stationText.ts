@@ -3,7 +3,7 @@ import { RillageError, throwIfAny } from '../errors.js';
 import { canonicalJson } from './canonicalJson.js';
 import { parseJson } from './parseJson.js';
 import { checkSchema, type Schema } from './schemaCheck.js';
-import { seal, sealOf } from './seal.js';
+import { seal, sealOf, withoutSeal } from './seal.js';
 import { excerptSchema, readingSchema, stationSchema } from './stationSchema.js';
 
 const VERSION = 1;
@@ -18,8 +18,7 @@ export interface ReadTextOptions {
  * @throws RillageError 'not-json' where a value has no JSON form
  */
 export function writeStation(station: Station): string {
-  const { seal: _old, ...content } = station;
-  return `${canonicalJson(seal(content))}\n`;
+  return `${canonicalJson(seal(withoutSeal(station)))}\n`;
 }
 
 /**
@@ -35,8 +34,7 @@ export function readStation(text: string, options: ReadTextOptions = {}): Statio
 
 /** An excerpt as text: canonical JSON, freshly sealed, one line; errors as {@link writeStation}. */
 export function writeExcerpt(excerpt: StationExcerpt): string {
-  const { seal: _old, ...content } = excerpt;
-  return `${canonicalJson(seal(content))}\n`;
+  return `${canonicalJson(seal(withoutSeal(excerpt)))}\n`;
 }
 
 /** An excerpt from text that may be anything; errors as {@link readStation}, with 'not-an-excerpt'. */

@@ -9,7 +9,7 @@ import { addToBalance, roundedDistribution } from './makeStation.js';
 import { type Members, readMembers } from './members.js';
 import { instantMs, instantText } from './readingTime.js';
 import { recentRows, rowsKnown } from './recentRows.js';
-import { seal } from './seal.js';
+import { seal, withoutSeal } from './seal.js';
 
 const DAY_MS = 86_400_000;
 
@@ -84,8 +84,4 @@ function rowsFrom(forcing: Forcing, first: number): Forcing {
 
 function membersAfter(before: readonly StationMember[], { runs }: Members): StationMember[] {
   return before.map(({ weight }, i) => ({ weight, checkpoint: (runs[i] as Members['runs'][number]).checkpoint() }));
-}
-
-function withoutSeal({ seal: _seal, ...rest }: Station): Omit<Station, 'seal'> {
-  return rest;
 }
