@@ -8,6 +8,7 @@ import { columnViewMessages } from '../../../packages/elements/src/rillage-colum
 import { explorerMessages } from '../../../packages/elements/src/rillage-explorer/messages.js';
 import { composeMessages } from '../../../packages/elements/src/rillage-reading/compose-messages.js';
 import { detailsMessages } from '../../../packages/elements/src/rillage-reading/details-messages.js';
+import { fitPanelMessages } from '../../../packages/elements/src/rillage-fit-panel/messages.js';
 import { forcingInputMessages } from '../../../packages/elements/src/rillage-forcing-input/messages.js';
 import { readingMessages } from '../../../packages/elements/src/rillage-reading/messages.js';
 import { stationMessages } from '../../../packages/elements/src/rillage-station/messages.js';
@@ -18,6 +19,7 @@ const english: Messages = {
   ...ageHistoryMessages,
   ...columnViewMessages,
   ...explorerMessages,
+  ...fitPanelMessages,
   ...forcingInputMessages,
   ...agePlotMessages,
   ...composeMessages,

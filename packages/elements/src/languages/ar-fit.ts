@@ -73,6 +73,7 @@ export const fit: Messages = {
   'fit.weight': 'الوزن',
   'fit.young': 'أحدث من 30 يومًا اليوم',
   'fit.medianAge': 'العمر الوسيط اليوم',
+  'fit.outcome': 'النتيجة',
   'fit.outcome.converged': 'متقارب',
   'fit.outcome.notConverged': 'غير متقارب',
   'fit.outcome.impossible': 'مستحيل',

@@ -75,6 +75,7 @@ export const fit: Messages = {
   'fit.weight': 'Gewicht',
   'fit.young': 'Heute jünger als 30 Tage',
   'fit.medianAge': 'Medianalter heute',
+  'fit.outcome': 'Ergebnis',
   'fit.outcome.converged': 'konvergiert',
   'fit.outcome.notConverged': 'nicht konvergiert',
   'fit.outcome.impossible': 'unmöglich',

@@ -75,6 +75,7 @@ export const fitPanelMessages = {
   'fit.weight': 'Weight',
   'fit.young': 'Today younger than 30 days',
   'fit.medianAge': 'Median age today',
+  'fit.outcome': 'Outcome',
   'fit.outcome.converged': 'converged',
   'fit.outcome.notConverged': 'not converged',
   'fit.outcome.impossible': 'impossible',

@@ -140,7 +140,7 @@ function samples(
 
 function alternatives({ fit, choices, language }: ResultsProps): TemplateResult {
   const say = language.say.bind(language);
-  const columns = [say('fit.alternative'), say('fit.weight'), say('fit.young'), say('fit.medianAge'), ''];
+  const columns = [say('fit.alternative'), say('fit.weight'), say('fit.young'), say('fit.medianAge'), say('fit.outcome')];
   return html`<h3>${say('fit.alternatives')}</h3>
     ${rows(
       say('fit.alternatives'),
