@@ -12,7 +12,7 @@ describe('the intake under the strict policy', () => {
   );
 
   it('loads from the single file, proposes, reads, plots, takes an edit, and breaks no rule', async () => {
-    await import('../../../packages/elements/dist/rillage-elements.min.js' as string);
+    await import('../../../packages/elements/dist/rillage-desk.min.js' as string);
     const element = document.createElement('rillage-forcing-input');
     Object.assign(element, { guessLayout, readForcing, files: [{ name: 'day.csv', text }] });
     document.body.append(element);

@@ -31,7 +31,7 @@ describe('define()', () => {
   });
 
   it('defineAll({ prefix }) defines all under another prefix, working among themselves', async () => {
-    const tags = ['age-history', 'age-plot', 'column-view', 'explorer', 'forcing-input', 'reading', 'station'].map(
+    const tags = ['age-history', 'age-plot', 'column-view', 'explorer', 'fit-panel', 'forcing-input', 'reading', 'station'].map(
       (name) => `agency-${name}`,
     );
     expect(defineAll({ prefix: 'agency' })).to.deep.equal(tags);
