@@ -2,7 +2,6 @@ import { existsSync } from 'node:fs';
 import resolve from '@rollup/plugin-node-resolve';
 import terser from '@rollup/plugin-terser';
 import { languageFile, laterLanguages } from './demo-site/tools/rollup/later-languages.mjs';
-import { lateUplot } from './demo-site/tools/rollup/late-uplot.mjs';
 import { narrowTemplates } from './demo-site/tools/rollup/narrow-templates.mjs';
 import { ownPolicy } from './demo-site/tools/rollup/own-policy.mjs';
 import { at, filesUnder } from './demo-site/tools/paths.mjs';
@@ -60,7 +59,6 @@ export function optionsFor({ input, from, code, file }) {
       code ? lines(from, code) : null,
       code ? laterLanguages() : null,
       ownPolicy(),
-      lateUplot(),
       resolve({ browser: true, exportConditions: ['browser', 'production'] }),
       small(),
       from?.includes('elements') ? narrowTemplates() : null,

@@ -1,7 +1,7 @@
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { at } from './paths.mjs';
 
-const packages = ['lit', 'lit-html', 'lit-element', '@lit/reactive-element', 'uplot', 'idb-keyval'];
+const packages = ['lit', 'lit-html', 'lit-element', '@lit/reactive-element', 'idb-keyval'];
 
 /** Writes the licences of the packages that the single-file build of the elements contains, beside it. */
 export function writeLicences() {

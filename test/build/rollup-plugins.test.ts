@@ -1,7 +1,6 @@
 import { rollup, type Plugin } from 'rollup';
 import { describe, expect, it } from 'vitest';
 import resolve from '@rollup/plugin-node-resolve';
-import { lateUplot } from '../../demo-site/tools/rollup/late-uplot.mjs';
 import { lines } from '../../demo-site/tools/rollup/lines.mjs';
 import { narrowTemplates } from '../../demo-site/tools/rollup/narrow-templates.mjs';
 import { ownPolicy } from '../../demo-site/tools/rollup/own-policy.mjs';
@@ -39,34 +38,6 @@ describe('ownPolicy', () => {
     const [one, two] = ['/a/node_modules/lit-html/lit-html.js', '/b/node_modules/lit-html/lit-html.js'] as const;
     const entry = `export * as one from '${one}'; export * as two from '${two}';`;
     await expect(bundle(entry, [ownPolicy(), copy(one), copy(two)])).rejects.toThrow('found 2 times');
-  });
-});
-
-describe('lateUplot', () => {
-  const plugins = (): unknown[] => [lateUplot(), resolve({ browser: true })];
-  const load = (code: string): Promise<Record<string, unknown>> =>
-    import(/* @vite-ignore */ `data:text/javascript;base64,${Buffer.from(code).toString('base64')}`) as Promise<Record<string, unknown>>;
-
-  it('evaluates uPlot at the call, and a failure there rejects the call alone', async () => {
-    const code = await bundle("export const chart = () => import('uplot');", plugins());
-    // What uPlot does at import where the browser's language is no valid tag.
-    const broken = code.replace(/const evaluate = \(\) => \{/, "const evaluate = () => { new Intl.NumberFormat('not a tag');");
-    expect(broken).not.toBe(code);
-    const { chart } = (await load(broken)) as { chart: () => Promise<unknown> };
-    await expect(chart()).rejects.toThrow(RangeError);
-  });
-
-  it('gives the same module at every call', async () => {
-    const { chart } = (await load(await bundle("export const chart = () => import('uplot');", plugins()))) as {
-      chart: () => Promise<{ default: unknown }>;
-    };
-    const [first, second] = [await chart(), await chart()];
-    expect(first.default).toBeTypeOf('function');
-    expect(second.default).toBe(first.default);
-  });
-
-  it('fails the build where uPlot is imported statically', async () => {
-    await expect(bundle("export { default } from 'uplot';", plugins())).rejects.toThrow('imports uplot statically');
   });
 });
 

@@ -35,7 +35,7 @@ export function budgets() {
       name: 'one plot',
       limitKb: 36,
       bundle: elementBundle('rillage-age-plot', of('rillage-age-plot')),
-      without: [engine, outside('sdk', 'elements', 'lit', 'uplot')],
+      without: [engine, outside('sdk', 'elements', 'lit')],
     },
     {
       name: 'all elements for readers',
