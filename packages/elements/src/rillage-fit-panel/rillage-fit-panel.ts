@@ -329,7 +329,8 @@ export class RillageFitPanel extends LitElement {
       this.#said = this.#language.say(fit.partial ? 'fit.stopped' : 'fit.finished');
       this.dispatchEvent(new CustomEvent<FitDetail>('rillage-fit', going({ fit, problem })));
     } catch (reason) {
-      this.issues = issuesOf(reason);
+      // stopped before there was anything, or overtaken by another record: nothing was refused
+      if (this.#stop === stop && (reason as { code?: string }).code !== 'aborted') this.issues = issuesOf(reason);
     } finally {
       if (this.#stop === stop) {
         this.#stop = null;
